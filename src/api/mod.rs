@@ -1,0 +1,1 @@
+//! Routes, extractors, problem details, layers and the OpenAPI document.

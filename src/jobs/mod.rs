@@ -1,0 +1,1 @@
+//! Pure functions from prepared histories and columns to columns, one job a file.

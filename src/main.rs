@@ -1,0 +1,3 @@
+//! The `redfathom` command.
+
+fn main() {}

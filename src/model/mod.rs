@@ -1,0 +1,1 @@
+//! Which universe: constants, parameters and their ranges, dark-energy forms, neutrinos, published sets, fingerprints.

@@ -1,0 +1,1 @@
+//! The page for browsers and the cheat sheet for terminals.

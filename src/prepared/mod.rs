@@ -1,0 +1,1 @@
+//! Fingerprint to shared tables: the bounded cache, one build however many wait, and the bounded CPU pool.

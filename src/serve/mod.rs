@@ -1,0 +1,1 @@
+//! Configuration, listener, life cycle and telemetry of the process.

@@ -1,0 +1,1 @@
+//! Table formats, one a file.

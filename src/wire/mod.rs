@@ -1,0 +1,1 @@
+//! JSON requests and answers; names become references into the catalogue here and nowhere else.

@@ -1,0 +1,1 @@
+//! Tests against the running service over a real socket.
