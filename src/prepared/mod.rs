@@ -1,1 +1,7 @@
-//! Fingerprint to shared tables: the bounded cache, one build however many wait, and the bounded CPU pool.
+//! What is made once and used often: the tables of models, and the pool that makes them.
+
+mod pool;
+mod store;
+
+pub use pool::{Overloaded, Pool};
+pub use store::{Store, Weighed};
