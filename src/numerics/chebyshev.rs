@@ -68,6 +68,20 @@ impl Chebyshev {
         &self.nodes[..self.count]
     }
 
+    /// Five points at which an interpolant is worst: both ends and three inner
+    /// extrema of the Chebyshev polynomial that vanishes at all nodes.
+    #[must_use]
+    pub fn extrema(&self) -> [f64; 5] {
+        let n = self.count;
+        [
+            -1.0,
+            -cosine(2 * (n / 4), n),
+            -cosine(2 * (n / 2), n),
+            -cosine(2 * (n - n / 4), n),
+            1.0,
+        ]
+    }
+
     /// The coefficients of the interpolant's Chebyshev series.
     #[must_use]
     pub fn series(&self, samples: &[f64; LARGEST_NODES]) -> [f64; LARGEST_NODES] {
