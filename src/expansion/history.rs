@@ -344,7 +344,11 @@ impl History {
         let panels = redshifts.map(|redshift| self.panels.panel(redshift));
         let mut u = [0.0; 8];
         for lane in 0..8 {
-            u[lane] = panels[lane].coordinate(redshifts[lane]);
+            u[lane] = if self.domain.turns() {
+                panels[lane].coordinate(redshifts[lane])
+            } else {
+                panels[lane].linear_coordinate(redshifts[lane])
+            };
         }
         let rows = start..start + count;
         if wanted.comoving || wanted.conformal {

@@ -142,6 +142,12 @@ impl Panel {
         }
     }
 
+    /// The same on a panel of a history without turning points.
+    #[inline]
+    pub(super) fn linear_coordinate(&self, redshift: f64) -> f64 {
+        (redshift - self.centre) * self.scale
+    }
+
     /// What Σ rate[k] uᵏ is to be multiplied with to give E.
     #[inline]
     pub(super) fn rate_factor(&self, u: f64) -> f64 {

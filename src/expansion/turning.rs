@@ -164,6 +164,12 @@ impl End {
 const STEPS: i32 = 64;
 
 impl Domain {
+    /// Whether the expansion turns round at either end.
+    #[inline]
+    pub(super) fn turns(&self) -> bool {
+        self.low.turns || self.high.turns
+    }
+
     /// The connected interval around today in which E² is positive.
     ///
     /// # Errors
