@@ -4,7 +4,7 @@ use super::DoubleDouble;
 
 /// ln 2 as an unevaluated sum.
 const LN_2: DoubleDouble = DoubleDouble {
-    hi: 0.6931471805599453,
+    hi: std::f64::consts::LN_2,
     lo: 2.3190468138462996e-17,
 };
 
@@ -42,7 +42,7 @@ const LN_OF_GRID: [(f64, f64); 33] = [
     (0.6451379613735847, 9.346960920120906e-19),
     (0.661398482245365, -7.603333785634003e-18),
     (0.6773988235918061, -2.0978183882652005e-18),
-    (0.6931471805599453, 2.3190468138462996e-17),
+    (std::f64::consts::LN_2, 2.3190468138462996e-17),
 ];
 
 /// The natural logarithm of a positive finite normal number as an unevaluated
@@ -81,7 +81,7 @@ mod tests {
     /// Values with 32 digits from a multiple-precision computation.
     #[test]
     fn logarithms_carry_more_than_a_double() {
-        close(10.0, 2.302585092994046, -2.1707562233822494e-16);
+        close(10.0, std::f64::consts::LN_10, -2.1707562233822494e-16);
         close(0.01, -4.605170185988091, -4.332104933119537e-16);
         close(1.0000001, 9.999999505838704e-08, 1.5249709528441489e-24);
         close(1090.92, 6.9947766559217674, -2.315490591053386e-16);
