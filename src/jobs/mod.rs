@@ -1,1 +1,21 @@
 //! Pure functions from prepared histories and columns to columns, one job a file.
+
+mod accuracy;
+mod conversion;
+mod convert;
+mod describe;
+mod early;
+mod future;
+mod milestones;
+mod remarks;
+mod rows;
+
+pub use accuracy::{Basis, StatedAccuracy};
+pub use conversion::{At, Branch, Conversion, ConvertFault, Output, Source};
+pub use convert::{BranchRange, BranchValues, Column, Converted, convert};
+pub use describe::{
+    Budget, Description, Early, EarlyEpoch, Equality, Fate, FateKind, Horizons, Milestones, Past,
+    PastKind, Scalar, Today, describe,
+};
+pub use early::{PrintedEpochs, sound_horizon_at_drag_mpc};
+pub use remarks::{Code, Detail, Remark, Remarks};

@@ -1,1 +1,18 @@
 //! The catalogue of quantities: name, unit, domain, accuracy, forward, inverse, source; and the unit grammar.
+
+mod catalogue;
+mod definition;
+mod frame;
+mod inverse;
+mod reach;
+mod solved;
+pub mod unit;
+
+pub use catalogue::{QUANTITIES, named};
+pub use definition::{
+    Block, Condition, Forward, HubbleScaling, Inverse, Quantity, Solved, Tolerance,
+};
+pub use frame::Frame;
+pub use inverse::{Inverter, Solution};
+pub use reach::Miss;
+pub use unit::{Scale, Unit, UnitFault, column_name};

@@ -1,0 +1,306 @@
+//! What is said about rows that could not be converted, or only with a warning.
+
+/// What can be said about a row.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord, Hash)]
+pub enum Code {
+    /// No value was given.
+    Missing,
+    /// Infinite or not a number.
+    NotFinite,
+    /// A cell that is no number.
+    Unreadable,
+    /// −1 < z < 0.
+    Blueshift,
+    /// No redshift above −1 has it.
+    OutsideDomain,
+    /// Outside the limits that the request set.
+    OutsideAcceptedRange,
+    /// More than the quantity reaches.
+    BeyondMaximum,
+    /// Before the universe began.
+    BeforeBeginning,
+    /// The model has no beginning.
+    NoBeginning,
+    /// Outside the redshifts that the model's history is told for.
+    BeyondModelRange,
+    /// Where the physics of the model stops being that of the universe.
+    BeyondPhysics,
+    /// Infinite.
+    Divergent,
+    /// Rounding of the input alone moves it.
+    IllConditioned,
+    /// A distribution cut at the end of the range.
+    Truncated,
+    /// Linear propagation misses the curvature.
+    NotLinear,
+    /// A probability density that is none.
+    BadDensity,
+    /// A probability density that did not integrate to 1.
+    Renormalised,
+    /// The background lies before the lens.
+    Foreground,
+}
+
+impl Code {
+    /// All of them, in the order of their documentation.
+    pub const ALL: [Code; 18] = [
+        Code::Missing,
+        Code::NotFinite,
+        Code::Unreadable,
+        Code::Blueshift,
+        Code::OutsideDomain,
+        Code::OutsideAcceptedRange,
+        Code::BeyondMaximum,
+        Code::BeforeBeginning,
+        Code::NoBeginning,
+        Code::BeyondModelRange,
+        Code::BeyondPhysics,
+        Code::Divergent,
+        Code::IllConditioned,
+        Code::Truncated,
+        Code::NotLinear,
+        Code::BadDensity,
+        Code::Renormalised,
+        Code::Foreground,
+    ];
+
+    const fn entry(self) -> (&'static str, &'static str, bool) {
+        match self {
+            Code::Missing => ("missing", "no value was given", false),
+            Code::NotFinite => ("not_finite", "the value is infinite or not a number", false),
+            Code::Unreadable => ("unreadable", "the cell is not a number", false),
+            Code::Blueshift => (
+                "blueshift",
+                "−1 < z < 0; \"future\": true gives times, rates and fractions",
+                false,
+            ),
+            Code::OutsideDomain => (
+                "outside_domain",
+                "no redshift above −1 has this value",
+                false,
+            ),
+            Code::OutsideAcceptedRange => (
+                "outside_accepted_range",
+                "outside the limits that the request sets",
+                false,
+            ),
+            Code::BeyondMaximum => (
+                "beyond_maximum",
+                "more than the quantity reaches in this model",
+                false,
+            ),
+            Code::BeforeBeginning => (
+                "before_beginning",
+                "before the beginning of the universe in this model",
+                false,
+            ),
+            Code::NoBeginning => (
+                "no_beginning",
+                "the model has no beginning to count from",
+                false,
+            ),
+            Code::BeyondModelRange => (
+                "beyond_model_range",
+                "outside the redshifts that the model's history is told for",
+                false,
+            ),
+            Code::BeyondPhysics => (
+                "beyond_physics",
+                "z > 1e8, where electron–positron pairs are missing in the model, or z > 20 without radiation; the value stays",
+                true,
+            ),
+            Code::Divergent => ("divergent", "the value is infinite", false),
+            Code::IllConditioned => (
+                "ill_conditioned",
+                "the rounding of the given value alone moves the result by more than 1e-9 of itself; the value stays",
+                true,
+            ),
+            Code::Truncated => (
+                "truncated",
+                "the distribution was cut at the end of the range; the value stays",
+                true,
+            ),
+            Code::NotLinear => (
+                "not_linear",
+                "linear propagation misses the curvature; the value stays",
+                true,
+            ),
+            Code::BadDensity => (
+                "bad_density",
+                "the probability density is zero, negative or not a number",
+                false,
+            ),
+            Code::Renormalised => (
+                "renormalised",
+                "the probability density did not integrate to 1; the value stays",
+                true,
+            ),
+            Code::Foreground => ("foreground", "the background lies before the lens", false),
+        }
+    }
+
+    /// As answers write it.
+    #[must_use]
+    pub const fn name(self) -> &'static str {
+        self.entry().0
+    }
+
+    /// One line on what it says.
+    #[must_use]
+    pub const fn meaning(self) -> &'static str {
+        self.entry().1
+    }
+
+    /// Whether the value stays beside the remark.
+    #[must_use]
+    pub const fn keeps_value(self) -> bool {
+        self.entry().2
+    }
+
+    const fn bit(self) -> u32 {
+        1 << self as u32
+    }
+}
+
+/// One remark.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Remark {
+    /// From 0.
+    pub row: usize,
+    /// The output it is about; `None` for the whole row.
+    pub column: Option<usize>,
+    /// What it says.
+    pub code: Code,
+    /// What makes it exact.
+    pub detail: Detail,
+}
+
+/// What makes a remark exact; written out with `Display`.
+#[derive(Clone, Copy, Debug, Default, PartialEq)]
+pub enum Detail {
+    /// Nothing.
+    #[default]
+    None,
+    /// The largest value of a quantity, in a unit of the catalogue.
+    Largest(f64, &'static str),
+    /// By how much rounding moves the redshift.
+    RedshiftUncertain(f64),
+    /// Redshifts between which the history is told.
+    Between(f64, f64),
+    /// The branch (from 1) that the remark is about.
+    Branch(u32),
+}
+
+impl Detail {
+    /// Whether there is nothing to add.
+    #[must_use]
+    pub fn is_none(&self) -> bool {
+        *self == Detail::None
+    }
+}
+
+impl std::fmt::Display for Detail {
+    fn fmt(&self, formatter: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
+        match self {
+            Detail::None => Ok(()),
+            Detail::Largest(value, unit) => {
+                write!(formatter, "the largest value is {value} {unit}")
+            }
+            Detail::RedshiftUncertain(spread) => {
+                write!(formatter, "dz = {spread:.1e} from rounding alone")
+            }
+            Detail::Between(low, high) => write!(formatter, "{low} <= z <= {high:e}"),
+            Detail::Branch(branch) => write!(formatter, "on branch {branch}"),
+        }
+    }
+}
+
+/// Remarks on a table: the first thousand, and a count of the rows of each code.
+#[derive(Clone, Debug, Default, PartialEq)]
+pub struct Remarks {
+    /// The first thousand, ordered by row.
+    pub first: Vec<Remark>,
+    /// Rows with each code, in the order of [`Code::ALL`]; codes without rows are left out.
+    pub counts: Vec<(Code, u64)>,
+    /// One bit a code, one word a row; empty without remarks.
+    rows: Vec<u32>,
+}
+
+/// Remarks kept in full.
+const KEPT: usize = 1000;
+
+impl Remarks {
+    /// The codes of one row.
+    pub fn row_codes(&self, row: usize) -> impl Iterator<Item = Code> + use<> {
+        let mask = self.rows.get(row).copied().unwrap_or(0);
+        Code::ALL
+            .into_iter()
+            .filter(move |code| mask & code.bit() != 0)
+    }
+
+    /// Takes the remarks of a block of rows, whose order within the block is free.
+    pub(super) fn take_block(&mut self, block: &mut Vec<Remark>, all_rows: usize) {
+        if block.is_empty() {
+            return;
+        }
+        block.sort_by_key(|remark| (remark.row, remark.column));
+        self.rows.resize(all_rows, 0);
+        for remark in block.drain(..) {
+            if self.first.len() < KEPT {
+                self.first.push(remark);
+            }
+            let Some(mask) = self.rows.get_mut(remark.row) else {
+                continue;
+            };
+            if *mask & remark.code.bit() == 0 {
+                *mask |= remark.code.bit();
+                self.count(remark.code);
+            }
+        }
+    }
+
+    fn count(&mut self, code: Code) {
+        match self.counts.binary_search_by_key(&code, |(code, _)| *code) {
+            Ok(place) => self.counts[place].1 += 1,
+            Err(place) => self.counts.insert(place, (code, 1)),
+        }
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn codes_stand_in_their_own_order() {
+        for (number, code) in Code::ALL.into_iter().enumerate() {
+            assert_eq!(code.bit(), 1 << number, "{}", code.name());
+        }
+    }
+
+    #[test]
+    fn a_thousand_are_kept_and_all_are_counted() {
+        let mut remarks = Remarks::default();
+        let remark = |row, code| Remark {
+            row,
+            column: None,
+            code,
+            detail: Detail::None,
+        };
+        let mut block: Vec<Remark> = (0..3000)
+            .rev()
+            .map(|row| remark(row, Code::Missing))
+            .collect();
+        block.push(remark(7, Code::BeyondPhysics));
+        remarks.take_block(&mut block, 3000);
+        assert_eq!(remarks.first.len(), 1000);
+        assert!(remarks.first.is_sorted_by_key(|remark| remark.row));
+        assert_eq!(
+            remarks.counts,
+            [(Code::Missing, 3000), (Code::BeyondPhysics, 1)]
+        );
+        let codes: Vec<Code> = remarks.row_codes(7).collect();
+        assert_eq!(codes, [Code::Missing, Code::BeyondPhysics]);
+        assert_eq!(remarks.row_codes(99_999).count(), 0);
+    }
+}
