@@ -9,8 +9,11 @@ mod dark_energy;
 mod declaration;
 mod fault;
 mod instant;
+mod neutrino_coefficients;
 pub mod neutrinos;
 pub mod parameter;
+mod published;
+mod published_sets;
 mod spec;
 
 pub use citation::Citation;
@@ -19,4 +22,6 @@ pub use declaration::{DarkEnergyDeclaration, Declaration, RadiationDeclaration};
 pub use fault::{ModelFault, ModelFaultKind};
 pub use instant::Instant;
 pub use parameter::Parameter;
+pub use published::{DEFAULT_MODEL, Origin, Printed, PublishedSet, Status, Uncertainty};
+pub use published_sets::PUBLISHED_SETS;
 pub use spec::{DarkEnergy, MassiveNeutrino, Radiation, Spec};
