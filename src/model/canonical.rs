@@ -1,82 +1,85 @@
-//! The canonical bytes of a model, and its fingerprint.
+//! The canonical bytes of a model and its fingerprint.
 //!
-//! Layout, all numbers as the big-endian bits of an IEEE 754 double with −0
-//! replaced by 0:
+//! Layout, all numbers big-endian, all reals the bits of an IEEE 754 double
+//! with −0 written as 0:
 //!
-//! 1. the eight ASCII bytes `rf1model`;
-//! 2. hubble_constant, matter, curvature;
-//! 3. one byte 1 and baryons, or one byte 0;
-//! 4. cmb_temperature, effective_neutrino_number and three neutrino masses,
-//!    ascending (all zero without radiation);
-//! 5. the density of dark energy;
-//! 6. the name of the simplest equal form of dark energy in ASCII, one zero
-//!    byte, then that form's numbers in the order of its parameters; a density
-//!    of zero is the form `none`.
+//! | bytes | what |
+//! |---|---|
+//! | 13 | ASCII `rf1-declared` and one zero byte |
+//! | 8 | Hubble constant, km/s/Mpc |
+//! | 8 | matter |
+//! | 8 | curvature |
+//! | 1 + 8 | 1 and the baryons, or 0 and eight zero bytes when not declared |
+//! | 8 | temperature of the microwave background, K; 0 without radiation |
+//! | 8 | effective neutrino number; 0 without radiation |
+//! | 3 × 8 | neutrino masses, eV, ascending, massless ones first as 0 |
+//! | 1 + n | length and ASCII name of the dark-energy form, the simplest equal one |
+//! | 8 | its density |
+//! | 4 + 8 n | count and numbers of its parameters, in the order of the form |
 
 use sha2::{Digest, Sha256};
 
-use super::{NONE, Spec};
+use super::Spec;
 
 impl Spec {
-    /// The bytes two specs share exactly when they are the same universe.
+    /// The bytes that are equal for equal models and only for them.
     #[must_use]
     pub fn canonical_bytes(&self) -> Vec<u8> {
-        let mut bytes = b"rf1model".to_vec();
-        let put =
-            |bytes: &mut Vec<u8>, number: f64| bytes.extend((number + 0.0).to_bits().to_be_bytes());
-        for number in [self.hubble_constant, self.matter, self.curvature] {
-            put(&mut bytes, number);
-        }
+        let mut bytes = Vec::with_capacity(160);
+        bytes.extend_from_slice(b"rf1-declared\0");
+        push_real(&mut bytes, self.hubble_constant);
+        push_real(&mut bytes, self.matter);
+        push_real(&mut bytes, self.curvature);
         bytes.push(u8::from(self.baryons.is_some()));
-        if let Some(baryons) = self.baryons {
-            put(&mut bytes, baryons);
-        }
-        let radiation = self
-            .radiation
-            .filter(|radiation| radiation.cmb_temperature > 0.0);
-        put(
-            &mut bytes,
-            radiation.map_or(0.0, |radiation| radiation.cmb_temperature),
-        );
-        put(
-            &mut bytes,
-            radiation.map_or(0.0, |radiation| radiation.effective_neutrino_number),
-        );
-        for mass in radiation.map_or([0.0; 3], |radiation| radiation.neutrino_masses) {
-            put(&mut bytes, mass);
-        }
-        put(&mut bytes, self.dark_energy.density);
-        let (form, numbers) = self.simplest_form();
-        bytes.extend(form.as_bytes());
-        bytes.push(0);
-        for number in numbers {
-            put(&mut bytes, *number);
-        }
+        push_real(&mut bytes, self.baryons.unwrap_or(0.0));
+        self.push_radiation(&mut bytes);
+        self.push_dark_energy(&mut bytes);
         bytes
     }
 
-    /// A label: `rf1-` and the first 16 hexadecimal digits of the SHA-256 of
-    /// the canonical bytes.
+    /// `rf1-` and the first 16 hexadecimal digits of the SHA-256 of the canonical bytes.
     #[must_use]
     pub fn fingerprint(&self) -> String {
+        use std::fmt::Write;
         let digest = Sha256::digest(self.canonical_bytes());
-        digest
-            .iter()
-            .take(8)
-            .fold("rf1-".to_owned(), |label, byte| {
-                format!("{label}{byte:02x}")
-            })
+        let mut text = String::from("rf1-");
+        for byte in digest.iter().take(8) {
+            // Writing to a string does not fail.
+            let _ = write!(text, "{byte:02x}");
+        }
+        text
     }
 
-    fn simplest_form(&self) -> (&'static str, &[f64]) {
-        let dark_energy = &self.dark_energy;
-        if dark_energy.density == 0.0 {
-            return (NONE.name, &[]);
-        }
-        match (dark_energy.form.simplest)(&dark_energy.parameters) {
-            // Every simpler form so far has no numbers of its own.
-            Some(simpler) => (simpler.name, &[]),
-            None => (dark_energy.form.name, &dark_energy.parameters),
+    fn push_radiation(&self, bytes: &mut Vec<u8>) {
+        let (temperature, number, masses) =
+            self.radiation.map_or((0.0, 0.0, [0.0; 3]), |radiation| {
+                (
+                    radiation.cmb_temperature,
+                    radiation.effective_neutrino_number,
+                    radiation.neutrino_masses,
+                )
+            });
+        push_real(bytes, temperature);
+        push_real(bytes, number);
+        for mass in masses {
+            push_real(bytes, mass);
         }
     }
+
+    fn push_dark_energy(&self, bytes: &mut Vec<u8>) {
+        let name = self.dark_energy.form.name.as_bytes();
+        bytes.push(name.len() as u8);
+        bytes.extend_from_slice(name);
+        push_real(bytes, self.dark_energy.density);
+        let parameters = &self.dark_energy.parameters;
+        bytes.extend_from_slice(&(parameters.len() as u32).to_be_bytes());
+        for parameter in parameters {
+            push_real(bytes, *parameter);
+        }
+    }
+}
+
+fn push_real(bytes: &mut Vec<u8>, value: f64) {
+    // −0 + 0 is 0, and every other number is kept.
+    bytes.extend_from_slice(&(value + 0.0).to_bits().to_be_bytes());
 }

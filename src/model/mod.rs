@@ -2,6 +2,7 @@
 //! neutrinos, published sets, fingerprints.
 
 mod canonical;
+mod check;
 mod citation;
 mod closure;
 pub mod constants;
@@ -9,7 +10,6 @@ mod dark_energy;
 mod declaration;
 mod fault;
 mod instant;
-mod neutrino_coefficients;
 pub mod neutrinos;
 pub mod parameter;
 mod published;

@@ -34,7 +34,7 @@ impl Parameter {
     #[must_use]
     pub fn allowed(&self) -> String {
         let open = if self.minimum_exclusive { '(' } else { '[' };
-        let range = format!("{open}{}, {}]", self.minimum, self.maximum);
+        let range = format!("{open}{}, {}]", shown(self.minimum), shown(self.maximum));
         if self.unit == "1" {
             range
         } else {
@@ -42,6 +42,16 @@ impl Parameter {
         }
     }
 }
+
+/// Shortest decimal text that reads back as the same double, without a trailing `.0`.
+#[must_use]
+pub(super) fn shown(value: f64) -> String {
+    let text = format!("{value:?}");
+    text.strip_suffix(".0").unwrap_or(&text).to_owned()
+}
+
+/// At most so many neutrino masses are declared; the other species are massless.
+pub const LARGEST_MASS_COUNT: usize = 3;
 
 const fn number(
     name: &'static str,
@@ -78,8 +88,8 @@ pub const MATTER: Parameter = number(
 /// Ω_K.
 pub const CURVATURE: Parameter = number(
     "curvature",
-    -100.0,
-    100.0,
+    -1000.0,
+    1000.0,
     "Curvature term today: positive = open, negative = closed.",
 );
 /// Ω_b.
@@ -120,3 +130,25 @@ pub const DARK_ENERGY_DENSITY: Parameter =
 /// w.
 pub const EQUATION_OF_STATE: Parameter =
     number("w", -20.0, 5.0, "Pressure over density of dark energy.");
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn the_ends_of_a_range_are_told_and_kept() {
+        assert!(!HUBBLE_CONSTANT.allows(0.0) && HUBBLE_CONSTANT.allows(f64::MIN_POSITIVE));
+        assert!(HUBBLE_CONSTANT.allows(1e4) && !HUBBLE_CONSTANT.allows(1e4_f64.next_up()));
+        assert!(MATTER.allows(0.0) && MATTER.allows(-0.0) && !MATTER.allows(-1e-300));
+        assert!(!MATTER.allows(f64::NAN) && !MATTER.allows(f64::INFINITY));
+        assert_eq!(HUBBLE_CONSTANT.allowed(), "(0, 10000] km/(s.Mpc)");
+        assert_eq!(EQUATION_OF_STATE.allowed(), "[-20, 5]");
+    }
+
+    #[test]
+    fn numbers_in_messages_stay_short() {
+        assert_eq!(shown(70.0), "70");
+        assert_eq!(shown(-1e-300), "-1e-300");
+        assert_eq!(shown(f64::NAN), "NaN");
+    }
+}

@@ -1,4 +1,4 @@
-"""Prints src/model/neutrino_coefficients.rs: python3 neutrino_table.py > FILE.
+"""Prints src/model/neutrinos/coefficients.rs: python3 neutrino_table.py > FILE.
 
 The energy density F(y) and three times the pressure G(y) of a relic
 Fermi-Dirac species of mass m over the energy density of a massless one,
