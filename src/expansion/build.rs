@@ -116,7 +116,7 @@ fn sum_from_today(panels: &mut [Panel], sums: &mut [Sums], steps: &[Steps], toda
     let (mut comoving, mut lookback) = (DoubleDouble::default(), DoubleDouble::default());
     for (number, step) in steps.iter().enumerate().skip(today) {
         let centre = &mut panels[number].at_centre;
-        centre.comoving = (comoving + -step.distance_low).value();
+        centre.set_comoving(comoving + -step.distance_low);
         centre.lookback = (lookback + -step.time_low).value();
         comoving = comoving + step.distance_high + -step.distance_low;
         lookback = lookback + step.time_high + -step.time_low;
@@ -126,7 +126,7 @@ fn sum_from_today(panels: &mut [Panel], sums: &mut [Sums], steps: &[Steps], toda
     (comoving, lookback) = (DoubleDouble::default(), DoubleDouble::default());
     for (number, step) in steps.iter().enumerate().take(today).rev() {
         let centre = &mut panels[number].at_centre;
-        centre.comoving = (comoving + -step.distance_high).value();
+        centre.set_comoving(comoving + -step.distance_high);
         centre.lookback = (lookback + -step.time_high).value();
         comoving = comoving + step.distance_low + -step.distance_high;
         lookback = lookback + step.time_low + -step.time_high;

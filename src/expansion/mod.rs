@@ -4,6 +4,7 @@
 mod build;
 mod check;
 mod densities;
+mod epochs;
 mod fit;
 mod history;
 mod inverse;
@@ -16,6 +17,7 @@ mod turning;
 mod tests;
 
 pub use densities::{Composition, Densities, Terms};
-pub use history::{Accuracy, Beginning, Epoch, Epochs, History, HistoryFault, Wanted};
+pub use epochs::{Epoch, Epochs, Wanted};
+pub use history::{Accuracy, Beginning, History, HistoryFault};
 pub use inverse::Curve;
 pub use turning::Turning;

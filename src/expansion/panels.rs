@@ -7,7 +7,7 @@
 //! tiny z loses nothing), or, beside a turning point, in the root of the
 //! distance to it, which is where the integrals are smooth.
 
-use crate::numerics::LARGEST_NODES;
+use crate::numerics::{DoubleDouble, LARGEST_NODES};
 
 /// The smallest stretch a table covers, 2⁻⁷: z = −0.9921875.
 pub(super) const LOWEST_OCTAVE: i32 = -7;
@@ -25,9 +25,18 @@ pub(super) type Powers = [f64; LARGEST_NODES];
 #[derive(Clone, Copy, Debug, Default, PartialEq)]
 pub(super) struct Sums {
     pub comoving: f64,
+    /// What `comoving` leaves out.
+    pub comoving_low: f64,
     pub lookback: f64,
     pub conformal: f64,
     pub age: f64,
+}
+
+impl Sums {
+    pub(super) fn set_comoving(&mut self, sum: DoubleDouble) {
+        self.comoving = sum.value();
+        self.comoving_low = (sum + -self.comoving).value();
+    }
 }
 
 /// One panel with its local coordinate u.

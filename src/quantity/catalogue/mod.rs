@@ -59,13 +59,7 @@ pub fn named(name: &str) -> Option<&'static Quantity> {
 /// The promise for everything that is a product of few rounded factors.
 const PRODUCT: Tolerance = Tolerance::Relative(2e-15);
 
-const NOTHING: Wanted = Wanted {
-    rate: false,
-    comoving: false,
-    lookback: false,
-    age: false,
-    conformal: false,
-};
+const NOTHING: Wanted = Wanted::NOTHING;
 const RATE: Wanted = Wanted {
     rate: true,
     ..NOTHING
