@@ -1,5 +1,6 @@
 //! Numbers on the wire: columns in, shortest round-trip digits out.
 
+use crate::tables::digits::shortest;
 use serde::de::{Deserialize, Deserializer, Error, SeqAccess, Unexpected, Visitor};
 use std::fmt;
 
@@ -11,8 +12,7 @@ pub struct Numbers(pub Vec<f64>);
 #[inline]
 pub fn write(out: &mut Vec<u8>, number: f64) {
     if number.is_finite() {
-        let mut buffer = zmij::Buffer::new();
-        out.extend_from_slice(buffer.format_finite(number).as_bytes());
+        shortest(out, number);
     } else {
         out.extend_from_slice(b"null");
     }

@@ -3,6 +3,8 @@
 //! Own code, because a batch of redshifts goes through it: arrays of numbers become a `Vec<f64>`
 //! at once, correctly rounded, and every fault knows its place.
 
+mod node;
+mod number;
 mod reader;
 mod shape;
 #[cfg(test)]
@@ -10,9 +12,9 @@ mod shape;
 mod tests;
 mod text;
 
-pub use reader::{Bounds, Node};
+pub use node::{Bounds, Node};
 
-use super::problem::Fault;
+use super::fault::Fault;
 use serde::Deserialize;
 
 /// Reads a body of the shape `T`.

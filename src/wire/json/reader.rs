@@ -1,48 +1,10 @@
 //! Bytes into a tree.
 
-use super::super::problem::{Code, Fault};
+use super::super::code::Code;
+use super::super::fault::Fault;
+use super::node::{Bounds, Node};
 use std::borrow::Cow;
 use std::collections::HashSet;
-
-/// A JSON value; the members of an object keep their order.
-#[derive(Clone, Debug, PartialEq)]
-pub enum Node<'a> {
-    /// null
-    Null,
-    /// true or false
-    Bool(bool),
-    /// A number, correctly rounded and finite.
-    Number(f64),
-    /// A string; borrowed unless it has escapes.
-    Text(Cow<'a, str>),
-    /// An array of numbers and nulls only (NaN marks a null), the empty array among them.
-    Numbers(Vec<f64>),
-    /// Any other array.
-    Array(Vec<Node<'a>>),
-    /// An object without duplicate names.
-    Object(Vec<(Cow<'a, str>, Node<'a>)>),
-}
-
-/// How large a body may be, apart from its bytes.
-#[derive(Clone, Debug)]
-pub struct Bounds {
-    /// Levels of arrays and objects.
-    pub depth: usize,
-    /// Elements of one array.
-    pub elements: usize,
-    /// Values that are not elements of an array of numbers.
-    pub nodes: usize,
-}
-
-impl Default for Bounds {
-    fn default() -> Bounds {
-        Bounds {
-            depth: 32,
-            elements: 1_000_000,
-            nodes: 1_100_000,
-        }
-    }
-}
 
 /// Reads a whole body.
 pub(super) fn read<'a>(body: &'a [u8], bounds: &Bounds) -> Result<Node<'a>, Fault> {
@@ -196,36 +158,6 @@ impl<'a> Reader<'a, '_> {
         }
     }
 
-    /// A number. The grammar of JSON is narrower than the parser's: digits on both sides of the
-    /// point, no leading zero.
-    #[inline]
-    fn number(&mut self) -> Result<f64, Fault> {
-        let token = self.bytes.get(self.at..).unwrap_or_default();
-        let unsigned = token.strip_prefix(b"-").unwrap_or(token);
-        let whole = unsigned
-            .iter()
-            .take_while(|byte| byte.is_ascii_digit())
-            .count();
-        let after = unsigned.get(whole..).unwrap_or_default();
-        let is_number = match (whole, unsigned, after) {
-            (0, ..) => false,
-            (2.., [b'0', ..], _) => false,
-            (_, _, [b'.', rest @ ..]) => rest.first().is_some_and(u8::is_ascii_digit),
-            _ => true,
-        };
-        match fast_float2::parse_partial::<f64, _>(token) {
-            Ok((number, length)) if is_number && number.is_finite() => {
-                self.at += length;
-                Ok(number)
-            }
-            Ok((_, length)) if is_number => Err(self.not_finite(length)),
-            _ => {
-                self.at += token.len() - unsigned.len();
-                Err(self.unexpected("a digit"))
-            }
-        }
-    }
-
     fn word(&mut self, word: &str) -> Result<(), Fault> {
         if self
             .bytes
@@ -274,16 +206,6 @@ impl<'a> Reader<'a, '_> {
     }
 
     #[cold]
-    fn not_finite(&self, length: usize) -> Fault {
-        let token = self.text.get(self.at..self.at + length).unwrap_or_default();
-        let detail = format!(
-            "{} is not a finite double; send null for a missing value",
-            token.get(..40).unwrap_or(token)
-        );
-        Fault::new(Code::JsonNotFinite, detail).value(token).at("")
-    }
-
-    #[cold]
     fn too_long(&self) -> Fault {
         let detail = format!("an array has more than {} elements", self.bounds.elements);
         Fault::new(Code::TooManyValues, detail).at("")
@@ -296,25 +218,6 @@ impl<'a> Reader<'a, '_> {
             Code::MalformedJson => fault,
             _ => fault.inside(segment),
         }
-    }
-}
-
-impl<'a> Node<'a> {
-    pub(super) fn of_number(number: f64) -> Node<'a> {
-        if number.is_nan() {
-            Node::Null
-        } else {
-            Node::Number(number)
-        }
-    }
-
-    /// Takes a member out of an object.
-    pub fn take(&mut self, name: &str) -> Option<Node<'a>> {
-        let Node::Object(members) = self else {
-            return None;
-        };
-        let index = members.iter().position(|(member, _)| member == name)?;
-        Some(members.remove(index).1)
     }
 }
 

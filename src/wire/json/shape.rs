@@ -1,8 +1,9 @@
 //! serde over the tree: which member is wrong, and how, in words for the sender.
 
+use super::super::code::Code;
+use super::super::fault::Fault;
 use super::super::nearest::nearest;
-use super::super::problem::{Code, Fault};
-use super::reader::Node;
+use super::node::Node;
 use serde::de::value::{BorrowedStrDeserializer, StringDeserializer};
 use serde::de::{
     DeserializeSeed, Deserializer, Error, Expected, IntoDeserializer, MapAccess, SeqAccess,

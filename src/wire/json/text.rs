@@ -1,6 +1,6 @@
 //! Strings and their escapes.
 
-use super::super::problem::Fault;
+use super::super::fault::Fault;
 use super::reader::{Reader, malformed};
 use std::borrow::Cow;
 

@@ -1,1 +1,3 @@
 //! Tests against the running service over a real socket.
+
+mod client;

@@ -82,7 +82,9 @@ const LADDER: &[Room] = &[
         name: "api",
         crates: &[
             "axum",
+            "brotli_decompressor",
             "bytes",
+            "flate2",
             "futures_util",
             "http_body_util",
             "serde",
@@ -95,6 +97,7 @@ const LADDER: &[Room] = &[
             "utoipa",
             "utoipa_axum",
             "utoipa_swagger_ui",
+            "zstd",
         ],
         never: &["numerics"],
         pure: false,

@@ -1,0 +1,43 @@
+//! Answers as responses: small ones whole, large ones in chunks as they are written.
+
+use super::accept::Format;
+use axum::body::Body;
+use axum::http::HeaderValue;
+use axum::http::header::{CONTENT_TYPE, VARY};
+use axum::response::Response;
+use futures_util::stream;
+use std::convert::Infallible;
+
+/// Up to how many bytes an answer is sent whole, with its length.
+pub const WHOLE_BYTES: usize = 128 * 1024;
+
+/// A response with all of its body.
+pub(super) fn whole(format: &Format, body: impl Into<Body>) -> Response {
+    let mut response = Response::new(body.into());
+    let headers = response.headers_mut();
+    // The constants of `Format` are plain ASCII.
+    if let Ok(kind) = HeaderValue::from_str(format.content_type) {
+        headers.insert(CONTENT_TYPE, kind);
+    }
+    headers.insert(VARY, VARIES);
+    response
+}
+
+/// A response whose body is made while it is sent; of less than [`WHOLE_BYTES`] it is made at once.
+pub fn chunked(
+    format: &Format,
+    estimate: usize,
+    chunks: impl Iterator<Item = Vec<u8>> + Send + 'static,
+) -> Response {
+    if estimate <= WHOLE_BYTES {
+        let mut body = Vec::with_capacity(estimate);
+        chunks.for_each(|chunk| body.extend_from_slice(&chunk));
+        return whole(format, body);
+    }
+    whole(
+        format,
+        Body::from_stream(stream::iter(chunks.map(Ok::<_, Infallible>))),
+    )
+}
+
+const VARIES: HeaderValue = HeaderValue::from_static("Accept, Accept-Encoding");
