@@ -1,10 +1,10 @@
 //! Columns of one quantity into columns of others.
 
-use super::conversion::{Branch, Conversion, ConvertFault};
+use super::conversion::{Branch, Conversion, ConvertFault, Output};
 use super::remarks::Remarks;
 use super::rows::{Place, Rows};
 use super::{StatedAccuracy, accuracy};
-use crate::quantity::{Frame, Quantity, Unit};
+use crate::quantity::{Frame, Quantity, Scale, Unit};
 
 /// What a conversion gives.
 #[derive(Clone, Debug)]
@@ -68,82 +68,36 @@ const BLOCK: usize = 512;
 pub fn convert(conversion: &Conversion) -> Result<Converted, ConvertFault> {
     let frame = Frame::of(conversion.history);
     let inverter = conversion.check(&frame)?;
-    let hubble_constant = frame.hubble_constant;
-    let source = conversion.from.scale(hubble_constant)?;
+    let source = conversion.from.scale(frame.hubble_constant)?;
+    let scaled = |(number, output): (usize, &Output)| output.scale(number, frame.hubble_constant);
     let scales = conversion
         .to
         .iter()
         .enumerate()
-        .map(|(number, output)| output.scale(number, hubble_constant))
+        .map(scaled)
         .collect::<Result<Vec<_>, _>>()?;
     let ranges = inverter.branches();
-    let chosen = match conversion.from.branch {
+    let chosen: Vec<usize> = match conversion.from.branch {
         Branch::Number(number) => vec![number as usize - 1],
         Branch::Far => vec![ranges.len() - 1],
         Branch::All => (0..ranges.len()).collect(),
     };
-
-    let values = conversion.from.values;
-    let empty = || {
-        conversion
-            .to
-            .iter()
-            .map(|_| vec![0.0; values.len()])
-            .collect()
-    };
-    let mut tables: Vec<Vec<Vec<f64>>> = chosen.iter().map(|_| empty()).collect();
-    let mut remarks = Remarks::default();
     let mut rows = Rows::new(frame, &inverter, conversion, source, &scales);
-    for (number, block) in values.chunks(BLOCK).enumerate() {
-        for (slot, (branch, table)) in chosen.iter().zip(&mut tables).enumerate() {
-            let place = Place {
-                first_row: number * BLOCK,
-                branch: *branch,
-                repeated: slot > 0,
-            };
-            rows.evaluate(block, place, table);
+    let (tables, remarks) = evaluate(conversion, &chosen, &mut rows);
+    let mut by_column: Vec<Vec<Vec<f64>>> = scales.iter().map(|_| Vec::new()).collect();
+    for column_of_branch in tables {
+        for (column, values) in by_column.iter_mut().zip(column_of_branch) {
+            column.push(values);
         }
-        remarks.take_block(&mut rows.remarks, values.len());
     }
-
-    let all = conversion.from.branch == Branch::All;
+    let column = |((output, scale), branches)| column(conversion, output, scale, branches);
     let columns = conversion
         .to
         .iter()
         .zip(&scales)
-        .enumerate()
-        .map(|(number, (output, scale))| {
-            let branch_values = |slot: usize| std::mem::take(&mut tables[slot][number]);
-            let mut branches: Vec<Vec<f64>> = (0..chosen.len()).map(branch_values).collect();
-            let values = if all {
-                branches[0].clone()
-            } else {
-                branches.swap_remove(0)
-            };
-            Column {
-                quantity: output.quantity,
-                unit: if output.per_sound_horizon.is_some() {
-                    Unit::dimensionless()
-                } else {
-                    output.unit.clone()
-                },
-                per_h: output.per_h,
-                per_sound_horizon: output.per_sound_horizon,
-                values,
-                accuracy: accuracy::stated(
-                    conversion.history,
-                    Some(conversion.from.quantity),
-                    output.quantity,
-                )
-                .scaled(scale),
-                branches: branches
-                    .into_iter()
-                    .zip(1..)
-                    .map(|(values, branch)| BranchValues { branch, values })
-                    .collect(),
-            }
-        });
-    let columns = columns.collect();
+        .zip(by_column)
+        .map(column)
+        .collect();
     let ranges = if ranges.len() > 1 { ranges } else { Vec::new() };
     let branches = ranges
         .into_iter()
@@ -155,4 +109,71 @@ pub fn convert(conversion: &Conversion) -> Result<Converted, ConvertFault> {
         remarks,
         branches,
     })
+}
+
+/// The columns on each chosen branch, block by block.
+fn evaluate(
+    conversion: &Conversion,
+    chosen: &[usize],
+    rows: &mut Rows,
+) -> (Vec<Vec<Vec<f64>>>, Remarks) {
+    let values = conversion.from.values;
+    let empty = |_: &usize| {
+        conversion
+            .to
+            .iter()
+            .map(|_| vec![0.0; values.len()])
+            .collect()
+    };
+    let mut tables: Vec<Vec<Vec<f64>>> = chosen.iter().map(empty).collect();
+    let mut remarks = Remarks::default();
+    for (number, block) in values.chunks(BLOCK).enumerate() {
+        for (slot, (branch, table)) in chosen.iter().zip(&mut tables).enumerate() {
+            let place = Place {
+                first_row: number * BLOCK,
+                branch: *branch,
+                repeated: slot > 0,
+            };
+            rows.evaluate(block, place, table);
+        }
+        remarks.take_block(&mut rows.remarks, values.len());
+    }
+    (tables, remarks)
+}
+
+/// One column from its values on each chosen branch.
+fn column(
+    conversion: &Conversion,
+    output: &Output,
+    scale: &Scale,
+    branches: Vec<Vec<f64>>,
+) -> Column {
+    let per_horizon = output.per_sound_horizon.is_some();
+    let numbered = |(values, branch)| BranchValues { branch, values };
+    let (values, branches) = if conversion.from.branch == Branch::All {
+        (
+            branches.first().cloned().unwrap_or_default(),
+            branches.into_iter().zip(1..).map(numbered).collect(),
+        )
+    } else {
+        (branches.into_iter().next().unwrap_or_default(), Vec::new())
+    };
+    Column {
+        quantity: output.quantity,
+        unit: if per_horizon {
+            Unit::dimensionless()
+        } else {
+            output.unit.clone()
+        },
+        per_h: output.per_h,
+        per_sound_horizon: output.per_sound_horizon,
+        values,
+        accuracy: accuracy::stated(
+            conversion.history,
+            Some(conversion.from.quantity),
+            output.quantity,
+        )
+        .scaled(scale),
+        branches,
+    }
 }

@@ -2,7 +2,7 @@
 
 use super::describe::{Early, EarlyEpoch, Scalar};
 use crate::expansion::History;
-use crate::model::Citation;
+use crate::model::{Citation, Printed};
 use crate::numerics::gauss_legendre_16;
 
 /// Redshifts that the paper of a published set prints.
@@ -12,6 +12,15 @@ pub struct PrintedEpochs {
     pub decoupling_redshift: Option<f64>,
     /// Of the drag epoch.
     pub drag_redshift: Option<f64>,
+}
+
+impl From<&Printed> for PrintedEpochs {
+    fn from(printed: &Printed) -> Self {
+        PrintedEpochs {
+            decoupling_redshift: printed.decoupling_redshift,
+            drag_redshift: printed.drag_redshift,
+        }
+    }
 }
 
 /// The sound horizon at the drag epoch in Mpc: the integral to the printed drag
@@ -57,57 +66,49 @@ fn sound_horizon_mpc(history: &History, redshift: f64) -> Option<f64> {
 /// The early epochs of a model.
 pub(super) fn early(history: &History, printed: PrintedEpochs) -> Early {
     let composition = Composition::of(history);
-    let epoch = |printed_redshift: Option<f64>, fit: fn(&Composition) -> f64, source: String| {
-        let redshift = match (printed_redshift, &composition) {
-            (Some(redshift), _) => Scalar::from(redshift, "1").with_source("printed with the set"),
-            (None, Ok(composition)) => {
-                let redshift = fit(composition);
-                if redshift > 0.0 && redshift < 1e8 {
-                    Scalar::from(redshift, "1").with_source(&source)
-                } else {
-                    Scalar::none("1", "the fit does not reach to such densities")
-                }
-            }
-            (None, Err(reason)) => Scalar::none("1", reason),
-        };
-        let horizon = redshift
-            .value
-            .and_then(|redshift| sound_horizon_mpc(history, redshift));
-        let missing = redshift
-            .reason
-            .or(composition.as_ref().err().copied())
-            .unwrap_or("the integral diverges");
-        EarlyEpoch {
-            sound_horizon: Scalar::optional(horizon, "Mpc", missing),
-            redshift,
+    let fit = |fit: fn(&Composition) -> f64, unit: &'static str, source: String| match &composition
+    {
+        Ok(composition) => {
+            let value = Some(fit(composition)).filter(|value| *value > 0.0 && *value < 1e8);
+            Scalar::optional(value, unit, "the fit does not reach to such densities")
+                .with_source(&source)
         }
+        Err(reason) => Scalar::none(unit, reason),
     };
-    let fitted =
-        |fit: fn(&Composition) -> f64, unit: &'static str, source: String| match &composition {
-            Ok(composition) => {
-                let value = Some(fit(composition)).filter(|value| value.is_finite());
-                Scalar::optional(value, unit, "the fit does not reach to such densities")
-                    .with_source(&source)
-            }
-            Err(reason) => Scalar::none(unit, reason),
-        };
     let decoupling = format!("fit of {HU_SUGIYAMA}; within 0.2 % of detailed recombination");
     let drag = format!("fit of {AIZPURU}; within 5e-5 of four printed values");
     let historical =
         format!("fit of {EISENSTEIN_HU}; historical, 4 % below detailed recombination");
+    let decoupling = fit(Composition::decoupling_redshift, "1", decoupling);
+    let drag = fit(Composition::drag_redshift, "1", drag);
     Early {
-        decoupling: epoch(
-            printed.decoupling_redshift,
-            Composition::decoupling_redshift,
-            decoupling,
-        ),
-        drag: epoch(printed.drag_redshift, Composition::drag_redshift, drag),
-        sound_horizon_fit: fitted(
+        decoupling: epoch(history, printed.decoupling_redshift, decoupling),
+        drag: epoch(history, printed.drag_redshift, drag),
+        sound_horizon_fit: fit(
             Composition::sound_horizon_mpc,
             "Mpc",
             format!("fit of {AUBOURG}"),
         ),
-        drag_redshift_historical: fitted(Composition::historical_drag_redshift, "1", historical),
+        drag_redshift_historical: fit(Composition::historical_drag_redshift, "1", historical),
+    }
+}
+
+/// An epoch at its printed redshift, or else at that of a fit.
+fn epoch(history: &History, printed: Option<f64>, fit: Scalar) -> EarlyEpoch {
+    let redshift = match printed {
+        Some(redshift) => Scalar::from(redshift, "1").with_source("printed with the set"),
+        None => fit,
+    };
+    let horizon = redshift
+        .value
+        .and_then(|redshift| sound_horizon_mpc(history, redshift));
+    let missing = redshift
+        .reason
+        .or(Composition::of(history).err())
+        .unwrap_or("the integral diverges");
+    EarlyEpoch {
+        sound_horizon: Scalar::optional(horizon, "Mpc", missing),
+        redshift,
     }
 }
 

@@ -1,6 +1,7 @@
 //! Pure functions from prepared histories and columns to columns, one job a file.
 
 mod accuracy;
+mod code;
 mod conversion;
 mod convert;
 mod describe;
@@ -9,8 +10,13 @@ mod future;
 mod milestones;
 mod remarks;
 mod rows;
+mod verdict;
+
+#[cfg(test)]
+mod tests;
 
 pub use accuracy::{Basis, StatedAccuracy};
+pub use code::Code;
 pub use conversion::{At, Branch, Conversion, ConvertFault, Output, Source};
 pub use convert::{BranchRange, BranchValues, Column, Converted, convert};
 pub use describe::{
@@ -18,4 +24,4 @@ pub use describe::{
     PastKind, Scalar, Today, describe,
 };
 pub use early::{PrintedEpochs, sound_horizon_at_drag_mpc};
-pub use remarks::{Code, Detail, Remark, Remarks};
+pub use remarks::{Detail, Remark, Remarks};

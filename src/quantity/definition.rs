@@ -112,6 +112,8 @@ pub enum Inverse {
     Direct {
         /// The redshift of a value inside the domain.
         redshift: fn(f64, &Frame) -> f64,
+        /// |y dz/dy| at a redshift: what a relative change of the value makes.
+        sensitivity: fn(f64) -> f64,
         /// The open interval of values that belong to z > −1.
         domain: fn(&Frame) -> (f64, f64),
     },

@@ -1,7 +1,8 @@
 //! From a quantity back to redshift, on every branch.
 
-use super::solved::{Monotone, monotone_parts};
+use super::knots::{Monotone, monotone_parts};
 use super::{Frame, Inverse, Quantity, Solved};
+use crate::expansion::Curve;
 
 /// The inverse of one quantity in one model, prepared for any number of values.
 #[derive(Clone, Debug)]
@@ -11,8 +12,8 @@ pub struct Inverter<'a> {
     pub(super) inverse: &'static Inverse,
     pub(super) future: bool,
     pub(super) parts: Vec<Monotone>,
-    /// Redshifts between which the value fixes the redshift well; empty for
-    /// curves that may turn, which see for themselves.
+    /// Redshifts between which a value fixes its redshift well; curves that may
+    /// turn see to that by themselves.
     settled: (f64, f64),
 }
 
@@ -23,11 +24,11 @@ pub struct Solution {
     pub redshifts: Vec<f64>,
     /// Rows whose redshift the rounding of the value may move by 1e-9 of itself.
     pub suspect: Vec<usize>,
+    scaled: Vec<f64>,
 }
 
-/// The relative uncertainty from rounding alone above which a value is said to
-/// be ill conditioned.
-pub(super) const ILL_CONDITIONED: f64 = 1e-9;
+/// The relative change by rounding of the input that makes a value ill conditioned.
+pub const ILL_CONDITIONED: f64 = 1e-9;
 
 impl<'a> Inverter<'a> {
     /// Prepares the inverse; `None` for quantities that have none.
@@ -51,16 +52,19 @@ impl<'a> Inverter<'a> {
             }
             _ => Vec::new(),
         };
-        let mut inverter = Inverter {
+        let settled = (0.0, f64::INFINITY);
+        let unsettled = Inverter {
             frame: *frame,
             quantity,
             inverse,
             future,
             parts,
-            settled: (f64::INFINITY, f64::NEG_INFINITY),
+            settled,
         };
-        inverter.settled = inverter.find_settled();
-        Some(inverter)
+        Some(Inverter {
+            settled: unsettled.find_settled(),
+            ..unsettled
+        })
     }
 
     /// The quantity that is given.
@@ -94,13 +98,21 @@ impl<'a> Inverter<'a> {
     /// The quantity at the result is within 4 ulp of the value plus what one ulp
     /// of the redshift makes.
     pub fn solve(&self, values: &[f64], branch: usize, out: &mut Solution) {
-        out.suspect.clear();
-        out.redshifts.clear();
-        out.redshifts.resize(values.len(), f64::NAN);
+        let Solution {
+            redshifts,
+            suspect,
+            scaled,
+        } = out;
+        suspect.clear();
+        redshifts.clear();
+        redshifts.resize(values.len(), f64::NAN);
+        scaled.clear();
         match self.inverse {
-            Inverse::Direct { redshift, domain } => {
+            Inverse::Direct {
+                redshift, domain, ..
+            } => {
                 let (low, high) = domain(&self.frame);
-                for (found, value) in out.redshifts.iter_mut().zip(values) {
+                for (found, value) in redshifts.iter_mut().zip(values) {
                     if *value > low && *value < high {
                         *found = redshift(*value, &self.frame);
                     }
@@ -108,59 +120,57 @@ impl<'a> Inverter<'a> {
             }
             Inverse::Table { curve, scale } => {
                 let scale = scale(&self.frame);
-                let scaled: Vec<f64> = values.iter().map(|value| value / scale).collect();
-                self.frame
-                    .history
-                    .invert(*curve, &scaled, &mut out.redshifts);
-                self.settle_today(values, &mut out.redshifts);
+                scaled.extend(values.iter().map(|value| value / scale));
+                self.frame.history.invert(*curve, scaled, redshifts);
             }
             Inverse::Solved { given, curve } => {
-                let given: Vec<f64> = values
-                    .iter()
-                    .map(|value| given(*value, &self.frame))
-                    .collect();
+                scaled.extend(values.iter().map(|value| given(*value, &self.frame)));
+                let slack = |row: usize| self.slack(values[row]);
                 if let Some(part) = self.parts.get(branch) {
-                    part.solve(
-                        &self.frame,
-                        curve,
-                        &given,
-                        &mut out.redshifts,
-                        &mut out.suspect,
-                    );
+                    part.solve(&self.frame, curve, (scaled, slack), redshifts, suspect);
                 }
                 return;
             }
         }
+        self.settle_ends(values, redshifts);
         let (low, high) = self.settled;
-        let suspect = |(row, z): (usize, &f64)| (*z < low || *z > high).then_some(row);
-        out.suspect
-            .extend(out.redshifts.iter().enumerate().filter_map(suspect));
+        let unsettled = |(row, z): (usize, &f64)| (*z < low || *z > high).then_some(row);
+        suspect.extend(redshifts.iter().enumerate().filter_map(unsettled));
     }
 
     /// By how much the rounding of a value moves its redshift.
     #[must_use]
     pub fn uncertainty(&self, value: f64, redshift: f64) -> f64 {
-        let nearby = value * (1.0 + 1e-6);
         match self.inverse {
-            Inverse::Direct { redshift, .. } => {
-                let change = redshift(nearby, &self.frame) - redshift(value, &self.frame);
-                change.abs() * (f64::EPSILON / 1e-6)
-            }
+            Inverse::Direct { sensitivity, .. } => f64::EPSILON * sensitivity(redshift),
             Inverse::Table { scale, curve } => {
                 let epoch = self.frame.history.epoch(redshift);
-                let time = matches!(
-                    curve,
-                    crate::expansion::Curve::Age | crate::expansion::Curve::Lookback
-                );
+                let time = matches!(curve, Curve::Age | Curve::Lookback);
                 let stretch = if time { 1.0 + redshift } else { 1.0 };
                 f64::EPSILON * (value / scale(&self.frame)).abs() * stretch * epoch.rate
             }
             Inverse::Solved { given, curve } => {
-                let change = given(nearby, &self.frame) - given(value, &self.frame);
-                let spread = change.abs() * (f64::EPSILON / 1e-6);
+                let spread = 0.25 * self.slack(value) * given(value, &self.frame);
                 self.near_turning(curve, spread, redshift)
             }
         }
+    }
+
+    /// The relative rounding of what is solved for: four times that of the value
+    /// and of the way from the value to it.
+    fn slack(&self, value: f64) -> f64 {
+        let Inverse::Solved { given, .. } = self.inverse else {
+            return 0.0;
+        };
+        const STEP: f64 = 1e-6;
+        let at = |value: f64| given(value, &self.frame);
+        let condition = (at(value * (1.0 + STEP)) / at(value) - 1.0).abs() / STEP;
+        4.0 * f64::EPSILON
+            * if condition.is_finite() {
+                condition.max(1.0)
+            } else {
+                1.0
+            }
     }
 
     /// The solution of spread = |y′| dz + ½ |y″| dz²: next to a turning point the
@@ -179,15 +189,31 @@ impl<'a> Inverter<'a> {
         2.0 * spread / (slope + (slope * slope + 2.0 * bend * spread).sqrt())
     }
 
-    /// A value that is today's to the last digit is not one of the future.
-    fn settle_today(&self, values: &[f64], redshifts: &mut [f64]) {
-        let today = self.quantity.at(0.0, &self.frame);
+    /// Values that are today's, or those of an end of the history, but for their
+    /// rounding belong to it; redshifts themselves are exact. A negative distance
+    /// belongs nowhere.
+    fn settle_ends(&self, values: &[f64], redshifts: &mut [f64]) {
+        if self.quantity.name == "redshift" {
+            return;
+        }
+        let (lowest, highest) = self.frame.history.range();
         for (redshift, value) in redshifts.iter_mut().zip(values) {
-            if *redshift < 0.0 && (value - today).abs() <= 2.0 * f64::EPSILON * today {
-                *redshift = 0.0;
+            if *redshift >= 0.0 && *redshift <= highest {
+                continue;
             }
             if !self.quantity.future && *value < 0.0 {
                 *redshift = f64::NAN;
+            }
+            for end in [lowest, 0.0, highest] {
+                let outside = if end == highest {
+                    *redshift > end
+                } else {
+                    *redshift < end
+                };
+                let rounding = self.uncertainty(*value, end) + f64::EPSILON * end.abs();
+                if outside && (*redshift - end).abs() <= 2.0 * rounding {
+                    *redshift = end;
+                }
             }
         }
     }
@@ -195,22 +221,23 @@ impl<'a> Inverter<'a> {
     /// The widest range of redshifts, about z = 1, where rounding cannot move a
     /// redshift by a share of 1e-9; a margin of 8 stands for what lies between edges.
     fn find_settled(&self) -> (f64, f64) {
-        let calm = |z: f64| {
-            let value = self.quantity.at(z, &self.frame);
-            8.0 * self.uncertainty(value, z) < ILL_CONDITIONED * z.abs()
-        };
         if matches!(self.inverse, Inverse::Solved { .. }) {
             return (0.0, f64::INFINITY);
         }
-        let edges = self.frame.history.edges();
-        let above = edges.partition_point(|edge| *edge < 1.0);
-        let high = edges[above..].iter().take_while(|edge| calm(**edge)).last();
-        let at_zero = self.quantity.at(0.0, &self.frame);
-        let low = if at_zero == 0.0 {
-            0.0
-        } else {
-            16.0 * self.uncertainty(at_zero, 0.0) / ILL_CONDITIONED
+        let calm = |z: &&f64| {
+            let value = self.quantity.at(**z, &self.frame);
+            8.0 * self.uncertainty(value, **z) < ILL_CONDITIONED * z.abs()
         };
+        let (_, highest) = self.frame.history.range();
+        let edges = self
+            .frame
+            .history
+            .edges()
+            .iter()
+            .filter(|edge| **edge > 0.0 && **edge <= highest);
+        let high = edges.take_while(calm).last();
+        let low =
+            16.0 * self.uncertainty(self.quantity.at(0.0, &self.frame), 0.0) / ILL_CONDITIONED;
         (low, high.copied().unwrap_or(f64::NEG_INFINITY))
     }
 }

@@ -4,6 +4,7 @@ mod catalogue;
 mod definition;
 mod frame;
 mod inverse;
+mod knots;
 mod reach;
 mod solved;
 pub mod unit;
@@ -13,6 +14,6 @@ pub use definition::{
     Block, Condition, Forward, HubbleScaling, Inverse, Quantity, Solved, Tolerance,
 };
 pub use frame::Frame;
-pub use inverse::{Inverter, Solution};
+pub use inverse::{ILL_CONDITIONED, Inverter, Solution};
 pub use reach::Miss;
 pub use unit::{Scale, Unit, UnitFault, column_name};

@@ -96,12 +96,12 @@ impl Inverter<'_> {
         else {
             return Miss::OutsideDomain;
         };
-        let (top, top_redshift, top_turns) = part.top();
-        let (_, bottom_redshift, bottom_turns) = part.bottom();
-        if given > top {
+        let (top, top_turns) = part.top();
+        let (bottom, bottom_turns) = part.bottom();
+        if given > top.value {
             let horizon = (curve.horizon)(&self.frame);
             return if top_turns {
-                Miss::BeyondMaximum(self.quantity.at(top_redshift, &self.frame))
+                Miss::BeyondMaximum(self.quantity.at(top.redshift, &self.frame))
             } else if given >= horizon {
                 Miss::BeyondMaximum(f64::NAN)
             } else {
@@ -110,7 +110,7 @@ impl Inverter<'_> {
         }
         if bottom_turns || given.is_nan() || given < 0.0 {
             Miss::OutsideDomain
-        } else if bottom_redshift == 0.0 {
+        } else if bottom.redshift == 0.0 {
             if curve.future {
                 Miss::Blueshift
             } else {

@@ -102,7 +102,12 @@ pub(super) const EQUATION_OF_STATE: Quantity = Quantity {
             .densities()
             .equation_of_state(1.0 + epoch.redshift)
     }),
-    undefined: |spec| (spec.dark_energy.density == 0.0).then_some("the model has no dark energy"),
+    undefined: |spec| {
+        spec.dark_energy
+            .form
+            .absent
+            .then_some("the model has no dark energy")
+    },
     formula: "w = P/ρ, as declared",
     source: Citation {
         authors: "Chevallier & Polarski",

@@ -18,6 +18,7 @@ pub(super) const REDSHIFT: Quantity = Quantity {
     condition: None,
     inverse: Some(Inverse::Direct {
         redshift: |value, _| value,
+        sensitivity: f64::abs,
         domain: |_| (-1.0, f64::INFINITY),
     }),
     undefined: always,
@@ -41,6 +42,7 @@ pub(super) const SCALE_FACTOR: Quantity = Quantity {
     inverse: Some(Inverse::Direct {
         // Not 1/a − 1: near a = 1 the difference is exact.
         redshift: |value, _| (1.0 - value) / value,
+        sensitivity: |z| 1.0 + z,
         domain: |_| (0.0, f64::INFINITY),
     }),
     undefined: always,
@@ -63,6 +65,7 @@ pub(super) const OPTICAL_VELOCITY: Quantity = Quantity {
     condition: None,
     inverse: Some(Inverse::Direct {
         redshift: |value, _| value / SPEED_OF_LIGHT_KM_S,
+        sensitivity: f64::abs,
         domain: |_| (-SPEED_OF_LIGHT_KM_S, f64::INFINITY),
     }),
     undefined: always,
@@ -86,6 +89,7 @@ pub(super) const RADIO_VELOCITY: Quantity = Quantity {
     condition: None,
     inverse: Some(Inverse::Direct {
         redshift: |value, _| value / (SPEED_OF_LIGHT_KM_S - value),
+        sensitivity: |z| z.abs() * (1.0 + z),
         domain: |_| (f64::NEG_INFINITY, SPEED_OF_LIGHT_KM_S),
     }),
     undefined: always,
@@ -109,6 +113,7 @@ pub(super) const CMB_TEMPERATURE: Quantity = Quantity {
     condition: None,
     inverse: Some(Inverse::Direct {
         redshift: |value, frame| (value - frame.cmb_temperature) / frame.cmb_temperature,
+        sensitivity: |z| 1.0 + z,
         domain: |_| (0.0, f64::INFINITY),
     }),
     undefined: |spec| match &spec.radiation {
