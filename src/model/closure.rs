@@ -82,14 +82,20 @@ fn balance(curvature: Option<f64>, density: Option<f64>, spec: &mut Spec) -> Opt
     match (curvature, density) {
         (Some(curvature), Some(density)) if !absent => {
             spec.curvature = curvature;
-            spec.dark_energy.density = closing(&fixed, curvature);
-            let residue = density - spec.dark_energy.density;
-            disagreement(residue, spec, density, Some(closing(&fixed, density)))
-                .or_else(|| impossible(&DARK_ENERGY_DENSITY, spec.dark_energy.density, spec))
+            let found = closing(&fixed, curvature);
+            spec.dark_energy.density = settled(density, found, &fixed, curvature);
+            disagreement(
+                density - found,
+                spec,
+                density,
+                Some(closing(&fixed, density)),
+            )
+            .or_else(|| impossible(&DARK_ENERGY_DENSITY, spec.dark_energy.density, spec))
         }
         (Some(given), _) if absent => {
-            spec.curvature = closing(&fixed, 0.0);
-            disagreement(given - spec.curvature, spec, given, None)
+            let found = closing(&fixed, 0.0);
+            spec.curvature = settled(given, found, &fixed, 0.0);
+            disagreement(given - found, spec, given, None)
                 .or_else(|| impossible(&CURVATURE, spec.curvature, spec))
         }
         (None, _) if absent || density.is_some() => {
@@ -108,18 +114,32 @@ fn balance(curvature: Option<f64>, density: Option<f64>, spec: &mut Spec) -> Opt
 /// 1 less the terms; exactly 0 where that is below 8 ulp of Σ|terms|, so that
 /// rounding does not create physics.
 fn closing(fixed: &[f64; 3], other: f64) -> f64 {
-    let mut rest = DoubleDouble::from(1.0) + -other;
-    let mut scale = other.abs();
-    for term in fixed {
-        rest = rest + -term;
-        scale += term.abs();
-    }
-    let ulp = scale.next_up() - scale;
-    if rest.value().abs() < 8.0 * ulp {
+    let rest = fixed
+        .iter()
+        .fold(DoubleDouble::from(1.0) + -other, |rest, term| rest + -term)
+        .value();
+    if rest.abs() < negligible(fixed, &[other]) {
         0.0
     } else {
-        rest.value()
+        rest
     }
+}
+
+/// The closing term of a full declaration: the given one where it differs from
+/// the computed one by rounding only, so that an echo declares the same model.
+fn settled(given: f64, found: f64, fixed: &[f64; 3], other: f64) -> f64 {
+    let residue = (given - found).abs();
+    if found != 0.0 && residue < negligible(fixed, &[other, given]) {
+        given
+    } else {
+        found
+    }
+}
+
+/// 8 ulp of the sum of all sizes.
+fn negligible(fixed: &[f64; 3], others: &[f64]) -> f64 {
+    let scale: f64 = fixed.iter().chain(others).map(|term| term.abs()).sum();
+    8.0 * (scale.next_up() - scale)
 }
 
 /// The fault of two given terms that do not sum to 1 with the rest; `spec` holds

@@ -5,7 +5,6 @@ use super::{Citation, Instant, Parameter};
 use crate::numerics::DoubleDouble;
 
 /// One form of dark energy.
-#[derive(Debug)]
 pub struct DarkEnergyForm {
     /// Its name in requests and answers.
     pub name: &'static str,
@@ -37,6 +36,13 @@ impl PartialEq for DarkEnergyForm {
     }
 }
 
+impl std::fmt::Debug for DarkEnergyForm {
+    /// The name says it all.
+    fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
+        f.write_str(self.name)
+    }
+}
+
 /// Every form.
 pub static DARK_ENERGY_FORMS: &[&DarkEnergyForm] = &[&NONE, &COSMOLOGICAL_CONSTANT, &CONSTANT];
 
@@ -47,7 +53,7 @@ pub static NONE: DarkEnergyForm = DarkEnergyForm {
     source: Citation {
         authors: "Friedmann",
         year: 1922,
-        reference: "Zeitschrift fuer Physik 10, 377",
+        reference: "Z. Phys. 10, 377",
         locator: "",
     },
     parameters: &[],
@@ -85,7 +91,7 @@ pub static CONSTANT: DarkEnergyForm = DarkEnergyForm {
     source: Citation {
         authors: "Turner & White",
         year: 1997,
-        reference: "Physical Review D 56, R4439",
+        reference: "Phys. Rev. D 56, R4439",
         locator: "from memory",
     },
     parameters: &[EQUATION_OF_STATE],
