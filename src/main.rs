@@ -1,3 +1,8 @@
 //! The `redfathom` command.
+#![forbid(unsafe_code)]
 
-fn main() {}
+use std::process::ExitCode;
+
+fn main() -> ExitCode {
+    redfathom::serve::run()
+}

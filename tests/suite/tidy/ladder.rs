@@ -89,6 +89,7 @@ const LADDER: &[Room] = &[
             "http_body_util",
             "serde",
             "serde_json",
+            "sha2",
             "thiserror",
             "tokio",
             "tower",

@@ -1,0 +1,37 @@
+//! What the service costs, as ratios of processor time within one run.
+//!
+//! `cargo bench` prints all tables; `cargo bench -- tables` or `-- requests` one
+//! half, `-- --rounds 101` more rounds. A time never fails: the machine may be busy.
+//!
+//! Times are those of the kernel's scheduler for the threads of the service
+//! (one thread of runtime, beside the pool), not of a clock on the wall. Each
+//! round measures every case once, and a ratio compares within its round; the
+//! table shows medians and quartiles over the rounds.
+#![allow(clippy::expect_used, clippy::panic, clippy::unwrap_used)]
+
+mod batches;
+mod client;
+mod histories;
+mod processor;
+mod rounds;
+mod server;
+mod singles;
+
+fn main() {
+    let arguments: Vec<String> = std::env::args().skip(1).collect();
+    let wanted = |name: &str| arguments.iter().any(|word| word == name);
+    let all = !wanted("tables") && !wanted("requests");
+    let rounds = arguments
+        .iter()
+        .skip_while(|word| *word != "--rounds")
+        .nth(1);
+    let rounds = rounds.map_or(31, |word| word.parse().expect("--rounds takes a number"));
+    if all || wanted("tables") {
+        histories::evaluation(rounds);
+        histories::building(rounds);
+    }
+    if all || wanted("requests") {
+        singles::compare(rounds);
+        batches::compare(rounds);
+    }
+}
