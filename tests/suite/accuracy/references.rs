@@ -184,3 +184,25 @@ fn list(text: Option<String>) -> Vec<f64> {
         .map(|part| part.parse().unwrap())
         .collect()
 }
+
+/// The history of a declared model that is known to be sound.
+pub(crate) fn history_of(declaration: &Declaration) -> History {
+    let spec = declaration
+        .close()
+        .unwrap_or_else(|faults| panic!("{declaration:?}: {faults:?}"));
+    History::build(&spec).unwrap_or_else(|fault| panic!("{declaration:?}: {fault}"))
+}
+
+/// Matter and, unless `lambda` is false, a cosmological constant that closes; no radiation.
+pub(crate) fn matter_model(hubble_constant: f64, matter: f64, lambda: bool) -> Declaration {
+    let empty = DarkEnergyDeclaration {
+        form: "none".to_owned(),
+        ..Default::default()
+    };
+    Declaration {
+        hubble_constant,
+        matter,
+        dark_energy: (!lambda).then_some(empty),
+        ..Default::default()
+    }
+}
