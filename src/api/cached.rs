@@ -19,9 +19,9 @@ impl Cached {
     ///
     /// `lasting` says that it stays the same under its address as long as the version does; the
     /// default model may be another one tomorrow.
-    pub(super) fn of(parts: &[&str], lasting: bool) -> Cached {
+    pub(super) fn of(parts: &[&[u8]], lasting: bool) -> Cached {
         let mut hash = Sha256::new();
-        for part in [&[env!("CARGO_PKG_VERSION")], parts].concat() {
+        for part in [&[env!("CARGO_PKG_VERSION").as_bytes()], parts].concat() {
             hash.update(part);
             hash.update([0]);
         }

@@ -35,6 +35,14 @@ pub(super) const BRANCHES: &str = r#"{
   "to": ["redshift"]
 }"#;
 
+/// A model by its name.
+pub(super) const NAMED_MODEL: &str = r#"{"model": "planck-2018-cmb-lensing"}"#;
+
+/// A model of matter alone.
+pub(super) const DECLARED_MODEL: &str = r#"{
+  "model": {"hubble_constant": 70.0, "matter": 1.0, "dark_energy": {"form": "none"}}
+}"#;
+
 /// An example as a value.
 pub(super) fn value(text: &str) -> Value {
     serde_json::from_str(text).unwrap_or_default()

@@ -5,7 +5,7 @@ use crate::expansion::{History, HistoryFault};
 use crate::jobs::PrintedEpochs;
 use crate::model::Spec;
 use crate::prepared::{Entry, Overloaded, Provenance, Unprepared};
-use crate::wire::model::{Model, ModelEcho, SpecEcho, model_faults};
+use crate::wire::model::{Model, ModelEcho, ModelEntry, SpecEcho, model_faults};
 use crate::wire::{Code, Fault, NameOr, nearest};
 use std::borrow::Cow;
 use std::sync::Arc;
@@ -113,6 +113,30 @@ pub(super) fn status(provenance: &Provenance) -> &'static str {
     match provenance {
         Provenance::Shipped(set) => set.status.name(),
         Provenance::Operator { .. } => "operator",
+    }
+}
+
+/// What the list says of a model that has a name.
+pub(crate) fn entry(entry: &Entry) -> ModelEntry<'_> {
+    let plain = ModelEntry {
+        name: &entry.name,
+        title: &entry.title,
+        status: status(&entry.provenance),
+        fingerprint: &entry.fingerprint,
+        spec: SpecEcho(&entry.spec),
+        source: None,
+        table: "",
+        column: "",
+        note: "",
+        uncertainty: None,
+        printed: None,
+    };
+    match &entry.provenance {
+        Provenance::Shipped(set) => plain.published(set),
+        Provenance::Operator { source } => ModelEntry {
+            source: source.clone(),
+            ..plain
+        },
     }
 }
 

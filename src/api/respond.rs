@@ -1,9 +1,11 @@
 //! Answers as responses: small ones whole, large ones in chunks as they are written.
 
-use super::accept::Format;
+use super::accept::{Format, choose};
+use super::cached::Cached;
+use super::refusal::Refusal;
 use axum::body::Body;
-use axum::http::HeaderValue;
 use axum::http::header::{CONTENT_TYPE, VARY};
+use axum::http::{HeaderMap, HeaderValue};
 use axum::response::Response;
 use futures_util::stream;
 use std::convert::Infallible;
@@ -21,6 +23,24 @@ pub(super) fn whole(format: &Format, body: impl Into<Body>) -> Response {
     }
     headers.insert(VARY, VARIES);
     response
+}
+
+/// A response that is compared with what the caller has, of a body that is made anyway.
+///
+/// # Errors
+/// `not_acceptable` if the header Accept leaves no such format.
+pub(crate) fn tagged(
+    format: &'static Format,
+    body: &[u8],
+    headers: &HeaderMap,
+) -> Result<Response, Refusal> {
+    let format = choose(&[format], None, headers)?;
+    let cached = Cached::of(&[body], false);
+    Ok(cached.known(headers, format).unwrap_or_else(|| {
+        let mut response = whole(format, body.to_vec());
+        cached.mark(&mut response);
+        response
+    }))
 }
 
 /// A response whose body is made while it is sent; of less than [`WHOLE_BYTES`] it is made at once.

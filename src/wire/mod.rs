@@ -10,6 +10,7 @@ pub mod nearest;
 pub mod numbers;
 pub mod operator_file;
 pub mod problem;
+pub mod quantities;
 pub mod query;
 mod schema;
 pub mod service;

@@ -1,5 +1,6 @@
 //! What the service tells about itself.
 
+use crate::model::constants;
 use serde::Serialize;
 use utoipa::ToSchema;
 
@@ -70,7 +71,61 @@ pub struct Constant {
     /// Its unit.
     pub unit: &'static str,
     /// Who fixed or measured it.
-    pub source: String,
+    pub source: &'static str,
+}
+
+impl Constant {
+    /// Those that the numbers rest on.
+    pub fn all() -> Vec<Constant> {
+        let codata = "CODATA 2018: Tiesinga et al. 2021, Reviews of Modern Physics 93, 025010";
+        let rows = [
+            (
+                "speed_of_light",
+                constants::SPEED_OF_LIGHT_KM_S,
+                "km/s",
+                codata,
+            ),
+            (
+                "gravitation",
+                constants::GRAVITATION,
+                "m**3/(kg.s**2)",
+                codata,
+            ),
+            (
+                "boltzmann_constant",
+                constants::BOLTZMANN_CONSTANT_J_K,
+                "J/K",
+                codata,
+            ),
+            (
+                "planck_constant",
+                constants::PLANCK_CONSTANT_J_S,
+                "J.s",
+                codata,
+            ),
+            ("electronvolt", constants::ELECTRONVOLT_J, "J", codata),
+            (
+                "astronomical_unit",
+                constants::ASTRONOMICAL_UNIT_M,
+                "m",
+                "IAU 2012 Resolution B2",
+            ),
+            (
+                "megaparsec",
+                constants::MEGAPARSEC_M,
+                "m",
+                "IAU 2015 Resolution B2, note 4: 648000/pi au",
+            ),
+            ("julian_year", constants::JULIAN_YEAR_S, "s", "365.25 days"),
+        ];
+        let constant = |(name, value, unit, source)| Constant {
+            name,
+            value,
+            unit,
+            source,
+        };
+        rows.into_iter().map(constant).collect()
+    }
 }
 
 /// How much a request may ask for.

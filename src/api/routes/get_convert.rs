@@ -44,10 +44,8 @@ pub(crate) async fn get_convert(
     let lasting = request.model.is_some();
     let mut asked = request.resolve(state.limits.size()).map_err(refused)?;
     let model = Chosen::of(&state, asked.model.take()).map_err(refused)?;
-    let cached = Cached::of(
-        &["convert", &canonical, &model.fingerprint, format.name],
-        lasting,
-    );
+    let parts = ["convert", &canonical, &model.fingerprint, format.name];
+    let cached = Cached::of(&parts.map(str::as_bytes), lasting);
     if let Some(known) = cached.known(&headers, format) {
         return Ok(known);
     }

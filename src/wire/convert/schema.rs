@@ -70,7 +70,9 @@ schemas! {
         "True for the model's own sound horizon at its drag redshift, or a length in Mpc.",
     ), [];
     /// One optional member a quantity.
-    Columns => columns(), [Column];
+    Columns => by_quantity("The columns by quantity: one member for each output.", "Column"), [Column];
+    /// One optional member a quantity.
+    Accuracies => by_quantity("Accuracies by quantity: one member for each that the model defines.", "Accuracy"), [Accuracy];
 }
 
 fn names(wanted: impl Fn(&Quantity) -> bool) -> Vec<&'static str> {
@@ -90,10 +92,10 @@ fn values() -> ArrayBuilder {
     ArrayBuilder::new().items(item).max_items(Some(1_000_000))
 }
 
-fn columns() -> ObjectBuilder {
-    let object = closed_object("The columns by quantity: one member for each output.");
+fn by_quantity(description: &str, member: &str) -> ObjectBuilder {
+    let object = closed_object(description);
     QUANTITIES.iter().fold(object, |object, quantity| {
-        object.property(quantity.name, reference("Column"))
+        object.property(quantity.name, reference(member))
     })
 }
 

@@ -1,3 +1,8 @@
 //! Tests against the running service over a real socket.
 
+mod around;
+mod bad_input;
 mod client;
+mod convert;
+mod models;
+mod problems;
