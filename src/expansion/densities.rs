@@ -8,16 +8,16 @@ use crate::numerics::{DoubleDouble, exponential};
 #[derive(Clone, Debug)]
 pub struct Densities {
     /// Photons and massless neutrinos, ∝ v⁴.
-    radiation: f64,
+    pub(super) radiation: f64,
     /// Matter without the massive neutrinos, ∝ v³.
-    cold_matter: f64,
+    pub(super) cold_matter: f64,
     /// Ω_K, ∝ v².
-    curvature: DoubleDouble,
+    pub(super) curvature: DoubleDouble,
     /// Dark energy today.
-    dark_energy: DoubleDouble,
-    form: &'static DarkEnergyForm,
+    pub(super) dark_energy: DoubleDouble,
+    pub(super) form: &'static DarkEnergyForm,
     parameters: Vec<f64>,
-    massive: Vec<MassiveNeutrino>,
+    pub(super) massive: Vec<MassiveNeutrino>,
     /// Terms of both signs: sums need more than a double near a zero of E².
     cancelling: bool,
 }
@@ -35,25 +35,6 @@ pub struct Terms {
     pub curvature: f64,
     /// Dark energy.
     pub dark_energy: f64,
-}
-
-/// Shares of the critical density at one redshift, with what follows from them.
-#[derive(Clone, Copy, Debug, PartialEq)]
-pub struct Composition {
-    /// Matter, massive neutrinos included.
-    pub matter: f64,
-    /// Photons and massless neutrinos.
-    pub radiation: f64,
-    /// Curvature: positive = open.
-    pub curvature: f64,
-    /// Dark energy.
-    pub dark_energy: f64,
-    /// Massive neutrinos, contained in `matter`.
-    pub massive_neutrino: f64,
-    /// w of the dark energy.
-    pub equation_of_state: f64,
-    /// q = −a ä / ȧ².
-    pub deceleration: f64,
 }
 
 impl Densities {
@@ -161,46 +142,29 @@ impl Densities {
         (sum + terms.curvature.abs() + terms.dark_energy.abs()) / self.rate_squared(stretch)
     }
 
-    /// Shares of the critical density, w and q at a redshift.
-    ///
-    /// # References
-    /// q = ½ Σ (1 + 3 wᵢ) Ωᵢ: Peebles 1993, Principles of Physical Cosmology, section 13.
-    #[must_use]
-    pub fn composition(&self, redshift: f64) -> Composition {
-        let stretch = 1.0 + redshift;
-        let terms = self.terms(stretch);
-        let total = self.rate_squared(stretch);
-        let equation_of_state = self.equation_of_state(stretch);
-        let pressure = self.massive_neutrino_pressure(stretch);
-        let accelerating = terms.dark_energy * (1.0 + 3.0 * equation_of_state);
-        let braking =
-            2.0 * terms.radiation + terms.cold_matter + terms.massive_neutrinos + pressure;
-        Composition {
-            matter: (terms.cold_matter + terms.massive_neutrinos) / total,
-            radiation: terms.radiation / total,
-            curvature: terms.curvature / total,
-            dark_energy: terms.dark_energy / total,
-            massive_neutrino: terms.massive_neutrinos / total,
-            equation_of_state,
-            deceleration: 0.5 * (braking + accelerating) / total,
-        }
-    }
-
     /// w of the dark energy at the stretch v.
     #[must_use]
     pub fn equation_of_state(&self, stretch: f64) -> f64 {
         (self.form.equation_of_state)(&self.parameters, &Instant::at_stretch(stretch))
     }
 
+    /// Density of dark energy over that of today.
     #[inline]
-    fn dark_energy_growth(&self, stretch: f64) -> f64 {
-        match self.form.ln_density {
-            None => 1.0,
-            Some(_) if self.dark_energy.hi == 0.0 => 0.0,
-            Some(ln_density) => {
-                exponential(ln_density(&self.parameters, &Instant::at_stretch(stretch)))
-            }
+    pub(super) fn dark_energy_growth(&self, stretch: f64) -> f64 {
+        if self.form.ln_density.is_none() {
+            return 1.0;
         }
+        let ln_growth = self.ln_dark_energy_growth(&Instant::at_stretch(stretch));
+        ln_growth.map_or(0.0, exponential)
+    }
+
+    /// Its logarithm; `None` where there is none or it is constant.
+    pub(super) fn ln_dark_energy_growth(&self, instant: &Instant) -> Option<DoubleDouble> {
+        let ln_density = self
+            .form
+            .ln_density
+            .filter(|_| self.dark_energy.hi != 0.0)?;
+        Some(ln_density(&self.parameters, instant))
     }
 
     /// ρ′ = 3 (1 + w) ρ / v, the continuity equation.

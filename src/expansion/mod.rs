@@ -1,6 +1,7 @@
 //! One model's history: densities, direct quadrature, panels checked against
 //! it, and their inverses.
 
+mod budget;
 mod build;
 mod check;
 mod densities;
@@ -16,7 +17,8 @@ mod turning;
 #[cfg(test)]
 mod tests;
 
-pub use densities::{Composition, Densities, Terms};
+pub use budget::Composition;
+pub use densities::{Densities, Terms};
 pub use epochs::{Epoch, Epochs, Wanted};
 pub use history::{Accuracy, Beginning, History, HistoryFault};
 pub use inverse::Curve;

@@ -88,27 +88,33 @@ fn with_antipodes_if(
 /// The zeros of a dimensionless function above a redshift, found between samples on every panel.
 fn zeros(history: &History, above: f64, function: impl Fn(f64) -> f64) -> Vec<f64> {
     let highest = history.range().1;
+    let on_panel = |pair: &[f64]| {
+        let (low, high) = (
+            pair.first().copied().unwrap_or(f64::NAN),
+            pair.last().copied().unwrap_or(f64::NAN),
+        );
+        (0..SAMPLES).map(move |sample| low + (high - low) * f64::from(sample) / f64::from(SAMPLES))
+    };
+    // The last sample stands just inside the range, where a bounce would be.
+    let samples = history
+        .edges()
+        .windows(2)
+        .flat_map(on_panel)
+        .filter(|z| *z > above && *z < highest);
     let mut found = Vec::new();
     let mut last: Option<(f64, f64)> = None;
-    for pair in history.edges().windows(2) {
-        let &[low, high] = pair else { continue };
-        for sample in 0..SAMPLES {
-            let z = low + (high - low) * f64::from(sample) / f64::from(SAMPLES);
-            if z <= above || z > highest {
-                continue;
-            }
-            let value = function(z);
-            if value.abs() < SIGNIFICANT {
-                continue;
-            }
-            if let Some((previous, at_previous)) = last
-                && (at_previous < 0.0) != (value < 0.0)
-                && let Some(root) = bracketed_root(previous, z, &function)
-            {
-                found.push(root);
-            }
-            last = Some((z, value));
+    for z in samples.chain([highest - 1e-12 * highest.abs()]) {
+        let value = function(z);
+        if value.abs() < SIGNIFICANT {
+            continue;
         }
+        if let Some((previous, at_previous)) = last
+            && (at_previous < 0.0) != (value < 0.0)
+            && let Some(root) = bracketed_root(previous, z, &function)
+        {
+            found.push(root);
+        }
+        last = Some((z, value));
     }
     found
 }

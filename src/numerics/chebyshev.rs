@@ -68,18 +68,11 @@ impl Chebyshev {
         &self.nodes[..self.count]
     }
 
-    /// Five points at which an interpolant is worst: both ends and three inner
-    /// extrema of the Chebyshev polynomial that vanishes at all nodes.
+    /// Nine points at which an interpolant is worst: both ends and inner extrema
+    /// of the Chebyshev polynomial that vanishes at all nodes.
     #[must_use]
-    pub fn extrema(&self) -> [f64; 5] {
-        let n = self.count;
-        [
-            -1.0,
-            -cosine(2 * (n / 4), n),
-            -cosine(2 * (n / 2), n),
-            -cosine(2 * (n - n / 4), n),
-            1.0,
-        ]
+    pub fn extrema(&self) -> [f64; 9] {
+        std::array::from_fn(|k| -cosine(2 * (k * self.count / 8), self.count))
     }
 
     /// The coefficients of the interpolant's Chebyshev series.
