@@ -9,7 +9,7 @@ use crate::numerics::two_sum;
 /// Which columns of [`Epochs`] are asked for.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
 pub struct Wanted {
-    /// E and E − 1.
+    /// E = H/H0.
     pub rate: bool,
     /// Comoving distance.
     pub comoving: bool,
@@ -65,8 +65,6 @@ pub struct Epoch {
     pub redshift: f64,
     /// E = H/H0.
     pub rate: f64,
-    /// E − 1, with its own relative accuracy as z → 0.
-    pub rate_excess: f64,
     /// Comoving distance along the line of sight; negative for z < 0.
     pub comoving: f64,
     /// What rounding took from the comoving distance, for functions that
@@ -85,8 +83,6 @@ pub struct Epoch {
 pub struct Epochs {
     /// E = H/H0.
     pub rate: Vec<f64>,
-    /// E − 1.
-    pub rate_excess: Vec<f64>,
     /// Comoving distance.
     pub comoving: Vec<f64>,
     /// What rounding took from it.
@@ -108,7 +104,6 @@ impl Epochs {
         Epoch {
             redshift,
             rate: read(&self.rate),
-            rate_excess: read(&self.rate_excess),
             comoving: read(&self.comoving),
             comoving_rest: read(&self.comoving_rest),
             lookback: read(&self.lookback),
@@ -130,7 +125,6 @@ impl History {
         Epoch {
             redshift,
             rate: panel.rate_factor(u) * polynomial(&panel.rate, u),
-            rate_excess: excess(panel, u),
             comoving: base.comoving + distance,
             comoving_rest: rest(base, distance),
             lookback: base.lookback + time,
@@ -152,6 +146,21 @@ impl History {
         }
     }
 
+    /// The panels of eight redshifts with the local coordinates there.
+    #[inline]
+    fn eight_coordinates(&self, redshifts: &[f64; 8]) -> ([&Panel; 8], [f64; 8]) {
+        let panels = redshifts.map(|redshift| self.panels.panel(redshift));
+        let turns = self.domain.turns();
+        let u = std::array::from_fn(|lane| {
+            if turns {
+                panels[lane].coordinate(redshifts[lane])
+            } else {
+                panels[lane].linear_coordinate(redshifts[lane])
+            }
+        });
+        (panels, u)
+    }
+
     #[inline]
     fn eight_epochs(
         &self,
@@ -160,15 +169,7 @@ impl History {
         wanted: Wanted,
         out: &mut Epochs,
     ) {
-        let panels = redshifts.map(|redshift| self.panels.panel(redshift));
-        let mut u = [0.0; 8];
-        for lane in 0..8 {
-            u[lane] = if self.domain.turns() {
-                panels[lane].coordinate(redshifts[lane])
-            } else {
-                panels[lane].linear_coordinate(redshifts[lane])
-            };
-        }
+        let (panels, u) = self.eight_coordinates(redshifts);
         if wanted.comoving || wanted.comoving_rest || wanted.conformal {
             let distance = integral(panels.map(|panel| &panel.distance), &u);
             let base = |lane: usize| &panels[lane].at_centre;
@@ -200,9 +201,6 @@ impl History {
             fill(&mut out.rate, true, &rows, |lane| {
                 panels[lane].rate_factor(u[lane]) * rate[lane]
             });
-            fill(&mut out.rate_excess, true, &rows, |lane| {
-                excess(panels[lane], u[lane])
-            });
         }
     }
 }
@@ -211,7 +209,6 @@ impl Epochs {
     fn resize(&mut self, count: usize, wanted: Wanted) {
         for (column, wanted) in [
             (&mut self.rate, wanted.rate),
-            (&mut self.rate_excess, wanted.rate),
             (&mut self.comoving, wanted.comoving),
             (&mut self.comoving_rest, wanted.comoving_rest),
             (&mut self.lookback, wanted.lookback),
@@ -250,16 +247,4 @@ fn integral(powers: [&Powers; 8], u: &[f64; 8]) -> [f64; 8] {
 /// What base + distance loses by rounding, and what the base had lost before.
 fn rest(base: &Sums, distance: f64) -> f64 {
     base.comoving_low + two_sum(base.comoving, distance).1
-}
-
-/// E − 1: on the panels that touch today the polynomial starts with exactly 1,
-/// so leaving it out loses nothing; elsewhere the difference is taken.
-fn excess(panel: &Panel, u: f64) -> f64 {
-    if panel.rate[0] == 1.0 {
-        let mut rest = panel.rate;
-        rest[0] = 0.0;
-        polynomial(&rest, u)
-    } else {
-        panel.rate_factor(u) * polynomial(&panel.rate, u) - 1.0
-    }
 }

@@ -62,62 +62,73 @@ impl History {
     }
 
     fn invert_eight(&self, curve: Curve, values: &[f64; 8]) -> [f64; 8] {
-        let falling = matches!(curve, Curve::Age | Curve::Conformal);
-        let knots = self.knots(curve);
-        let last = knots.len() - 2;
-        let numbers = values.map(|value| {
-            let above = knots.partition_point(|knot| {
-                if falling {
-                    *knot >= value
-                } else {
-                    *knot <= value
-                }
-            });
-            above.saturating_sub(1).min(last)
-        });
-        let panels = numbers.map(|number| self.panels.nth(number));
-        let powers = panels.map(|panel| curve.powers(panel));
-        // What the polynomial must come to, and where on the panel that is about.
-        let mut goal = [0.0; 8];
-        let mut u = [0.0; 8];
-        let mut ends = [(0.0, 0.0); 8];
-        for lane in 0..8 {
-            let (number, panel) = (numbers[lane], panels[lane]);
-            let base = curve.base(panel);
-            goal[lane] = if falling {
-                base - values[lane]
-            } else {
-                values[lane] - base
-            };
-            let edges = &self.panels.edges;
-            let (low, high) = (
-                panel.coordinate(edges[number]),
-                panel.coordinate(edges[number + 1]),
-            );
-            ends[lane] = (low.min(high), low.max(high));
-            let share = (values[lane] - knots[number]) / (knots[number + 1] - knots[number]);
-            u[lane] = low + share * (high - low);
-        }
+        let starts: [Start; 8] = std::array::from_fn(|lane| self.start(curve, values[lane]));
+        let powers: [&Powers; 8] = std::array::from_fn(|lane| curve.powers(starts[lane].panel));
+        let mut u: [f64; 8] = std::array::from_fn(|lane| starts[lane].u);
         for _ in 0..STEPS {
             let (integral, slope) = integrals(powers, &u);
             for lane in 0..8 {
-                let next = u[lane] - (integral[lane] - goal[lane]) / slope[lane];
-                u[lane] = next.clamp(ends[lane].0, ends[lane].1);
+                let start = &starts[lane];
+                let next = u[lane] - (integral[lane] - start.goal) / slope[lane];
+                u[lane] = next.max(start.low).min(start.high);
             }
         }
-        let mut redshifts = [0.0; 8];
-        for lane in 0..8 {
-            let inside = values[lane] >= knots[0].min(knots[last + 1])
-                && values[lane] <= knots[0].max(knots[last + 1]);
-            let redshift = panels[lane].redshift(u[lane]);
-            redshifts[lane] = if inside && knots[0].is_finite() {
-                redshift
+        std::array::from_fn(|lane| {
+            let start = &starts[lane];
+            if start.inside {
+                start.panel.redshift(u[lane])
             } else {
                 f64::NAN
-            };
-        }
-        redshifts
+            }
+        })
     }
+
+    /// Where the search for one value starts.
+    #[inline]
+    fn start(&self, curve: Curve, value: f64) -> Start<'_> {
+        let falling = matches!(curve, Curve::Age | Curve::Conformal);
+        let knots = self.knots(curve);
+        let last = knots.len() - 2;
+        let above = knots.partition_point(|knot| {
+            if falling {
+                *knot >= value
+            } else {
+                *knot <= value
+            }
+        });
+        let number = above.saturating_sub(1).min(last);
+        let panel = self.panels.nth(number);
+        let edges = &self.panels.edges;
+        let (low, high) = (
+            panel.coordinate(edges[number]),
+            panel.coordinate(edges[number + 1]),
+        );
+        let share = (value - knots[number]) / (knots[number + 1] - knots[number]);
+        let base = curve.base(panel);
+        let (first, end) = (knots[0], knots[last + 1]);
+        Start {
+            panel,
+            goal: if falling { base - value } else { value - base },
+            u: low + share * (high - low),
+            low: low.min(high),
+            high: low.max(high),
+            inside: first.is_finite() && value >= first.min(end) && value <= first.max(end),
+        }
+    }
+}
+
+/// The panel that holds a value, with the bracket of the local coordinate there.
+#[derive(Clone, Copy)]
+struct Start<'a> {
+    panel: &'a Panel,
+    /// What the polynomial must come to.
+    goal: f64,
+    /// On the secant of the panel.
+    u: f64,
+    low: f64,
+    high: f64,
+    /// Whether the curve takes the value at all.
+    inside: bool,
 }
 
 impl Curve {

@@ -111,6 +111,8 @@ fn zeros(history: &History, above: f64, function: impl Fn(f64) -> f64) -> Vec<f6
         if let Some((previous, at_previous)) = last
             && (at_previous < 0.0) != (value < 0.0)
             && let Some(root) = bracketed_root(previous, z, &function)
+            // Through a pole the sign changes as well.
+            && function(root).abs() < 0.5
         {
             found.push(root);
         }

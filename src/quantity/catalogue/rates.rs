@@ -92,7 +92,7 @@ pub(super) const REDSHIFT_DRIFT: Quantity = Quantity {
     table_error: Some(|accuracy| accuracy.rate),
     scaling: HubbleScaling::None,
     future: true,
-    forward: forward!(RATE, |epoch, frame| drift(epoch) / years(frame)),
+    forward: forward!(RATE, |epoch, frame| drift(epoch, frame) / years(frame)),
     condition: Some(NEAR_STANDSTILL),
     inverse: None,
     undefined: always,
@@ -112,7 +112,7 @@ pub(super) const VELOCITY_DRIFT: Quantity = Quantity {
     scaling: HubbleScaling::None,
     future: true,
     forward: forward!(RATE, |epoch, frame| {
-        SPEED_OF_LIGHT_CM_S * drift(epoch) / (1.0 + epoch.redshift) / years(frame)
+        drift(epoch, frame) / (1.0 + epoch.redshift) * (SPEED_OF_LIGHT_CM_S / years(frame))
     }),
     condition: Some(NEAR_STANDSTILL),
     inverse: None,
@@ -135,20 +135,19 @@ const LOEB: Citation = Citation {
     locator: "main relation (from memory)",
 };
 
-/// (1+z) − E, from z and E − 1, which keep their digits as z → 0.
-#[inline]
-fn drift(epoch: &Epoch) -> f64 {
-    epoch.redshift - epoch.rate_excess
+/// (1+z) − E.
+fn drift(epoch: &Epoch, frame: &Frame) -> f64 {
+    frame.history.densities().drift(epoch.redshift)
 }
 
 const NEAR_STANDSTILL: Condition = Condition {
     possible: |_| true,
-    number: |epoch, _| {
-        let terms = epoch.redshift.abs() + epoch.rate_excess.abs();
-        if terms == 0.0 {
+    number: |epoch, frame| {
+        let terms = epoch.redshift.abs() + (epoch.rate - 1.0).abs();
+        if epoch.redshift == 0.0 {
             1.0
         } else {
-            terms / drift(epoch).abs()
+            terms / drift(epoch, frame).abs()
         }
     },
 };
