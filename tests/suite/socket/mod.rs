@@ -2,7 +2,7 @@
 
 mod around;
 mod bad_input;
-mod client;
+pub(crate) mod client;
 mod convert;
 mod models;
 mod problems;
