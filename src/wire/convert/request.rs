@@ -13,12 +13,12 @@ use utoipa::ToSchema;
 #[serde(deny_unknown_fields)]
 pub struct ConvertRequest {
     /// The cosmological model: the name of a published or team set, or a declared one. Without it the default model is used, and the answer's model says `defaulted`.
-    #[schema(nullable = false, value_type = Model)]
+    #[schema(nullable = false, value_type = Option<Model>)]
     pub model: Option<Model>,
     /// The quantity that is given, with its values.
     pub from: From,
     /// The quantities wanted, each once. Without it: redshift, age, lookback_time, comoving_distance, luminosity_distance, angular_diameter_distance, distance_modulus, angular_scale, comoving_volume, as far as the model defines them.
-    #[schema(nullable = false, value_type = Vec<super::schema::Output>, min_items = 1, max_items = 64)]
+    #[schema(nullable = false, value_type = Option<Vec<super::schema::Output>>, min_items = 1, max_items = 64)]
     pub to: Option<Vec<NameOr<OutputRequest>>>,
     /// Whether times, rates and fractions are given for −1 < z < 0 too; without it such rows are null with the remark `blueshift`.
     #[schema(nullable = false)]
@@ -42,7 +42,7 @@ pub struct From {
     #[schema(nullable = false)]
     pub per_h: Option<bool>,
     /// Which redshift is meant where several give the value: `near` (the lowest, also without this member), `far` (the highest), a number counted from 1 at the lowest, or `all`.
-    #[schema(nullable = false, value_type = super::schema::Branch)]
+    #[schema(nullable = false, value_type = Option<super::schema::Branch>)]
     pub branch: Option<Branch>,
 }
 
@@ -60,7 +60,7 @@ pub struct OutputRequest {
     #[schema(nullable = false)]
     pub per_h: Option<bool>,
     /// Whether a distance is divided by the sound horizon: `true` for the model's own integral to its drag redshift, or a length in Mpc.
-    #[schema(nullable = false, value_type = super::schema::PerSoundHorizon)]
+    #[schema(nullable = false, value_type = Option<super::schema::PerSoundHorizon>)]
     pub per_sound_horizon: Option<PerSoundHorizon>,
 }
 

@@ -13,7 +13,7 @@ use utoipa::ToSchema;
 #[serde(deny_unknown_fields)]
 pub struct DescribeRequest {
     /// The model; without it the default one.
-    #[schema(nullable = false, value_type = Model)]
+    #[schema(nullable = false, value_type = Option<Model>)]
     pub model: Option<Model>,
 }
 

@@ -66,7 +66,7 @@ pub struct UncertaintyEntry {
     pub standard_deviations: &'static [f64],
     /// Rows of the correlation matrix; absent where it is not known.
     #[serde(skip_serializing_if = "Option::is_none")]
-    #[schema(nullable = false, value_type = Vec<Vec<f64>>)]
+    #[schema(nullable = false, value_type = Option<Vec<Vec<f64>>>)]
     pub correlations: Option<&'static [&'static [f64]]>,
     /// Where the correlations come from.
     #[serde(skip_serializing_if = "str::is_empty")]
