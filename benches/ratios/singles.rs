@@ -26,6 +26,7 @@ pub(crate) fn compare(rounds: usize) {
     };
     let mut cases = [
         case("hello", &hello, "/".to_owned()),
+        case("GET /livez", &service, "/livez".to_owned()),
         case(
             "GET one redshift, one output",
             &service,
@@ -43,6 +44,11 @@ pub(crate) fn compare(rounds: usize) {
         ),
     ];
     let ratios = [
+        Ratio {
+            case: "GET /livez",
+            to: "hello",
+            goal: 1.5,
+        },
         Ratio {
             case: "GET one redshift, one output",
             to: "hello",

@@ -9,14 +9,16 @@ assert.ok(base);
 const client = createClient<paths>({ baseUrl: base });
 
 // Forward, an array with a null, under a declared model.
+const model = { hubble_constant: 70, matter: 0.3, dark_energy: { form: "constant", w: -0.9 } } as const;
 const forward = await client.POST("/v1/convert", {
   body: {
-    model: { hubble_constant: 70, matter: 0.3, dark_energy: { form: "constant", w: -0.9 } },
+    model,
     from: { quantity: "redshift", values: [0.5, null, 7.3] },
     to: ["age", { quantity: "luminosity_distance", unit: "Gpc" }],
   },
 });
-assert.ok(forward.data);
+// The answer may be a table, hence text: this one is not.
+assert.ok(forward.data && typeof forward.data !== "string");
 const age = forward.data.columns.age;
 const distance = forward.data.columns.luminosity_distance;
 assert.ok(age && distance);
@@ -26,12 +28,18 @@ assert.equal(distance.unit, "Gpc");
 assert.equal(forward.data.remarks[0]?.code, "missing");
 assert.match(forward.data.model.fingerprint, /^rf1-[0-9a-f]{16}$/);
 
-// And back, under the default model.
+// And back.
 const inverse = await client.POST("/v1/convert", {
-  body: { from: { quantity: "age", values: [first] }, to: ["redshift"], model: { hubble_constant: 70, matter: 0.3, dark_energy: { form: "constant", w: -0.9 } } },
+  body: { model, from: { quantity: "age", values: [first] }, to: ["redshift"] },
 });
-const redshift = inverse.data?.columns.redshift?.values[0];
+assert.ok(inverse.data && typeof inverse.data !== "string");
+const redshift = inverse.data.columns.redshift?.values[0];
 assert.ok(typeof redshift === "number" && Math.abs(redshift - 0.5) < 1e-13);
+
+// Without a model or outputs: the default of each.
+const usual = await client.POST("/v1/convert", { body: { from: { quantity: "redshift", values: 1 } } });
+assert.ok(usual.data && typeof usual.data !== "string");
+assert.equal(usual.data.model.defaulted, true);
 
 // A problem has its type.
 const refused = await client.POST("/v1/convert", {
