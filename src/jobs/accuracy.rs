@@ -46,7 +46,9 @@ pub(super) fn stated(history: &History, from: Option<&Quantity>, to: &Quantity) 
         Basis::Checked
     };
     match to.tolerance {
+        // One unit in the last place of a modulus up to 128 belongs to the promise.
         Tolerance::Absolute(tolerance) => {
+            let tolerance = tolerance + 64.0 * f64::EPSILON;
             let error = own + MAGNITUDES * inverse_error;
             StatedAccuracy {
                 relative: None,

@@ -79,7 +79,7 @@ fn matter_dark_energy(history: &History) -> Scalar {
 /// The largest of its neighbours among the turning points of D_A.
 fn peaks(history: &History) -> Vec<f64> {
     let frame = crate::quantity::Frame::of(history);
-    let distance = |z: f64| frame.transverse(history.epoch(z).comoving).abs() / (1.0 + z);
+    let distance = |z: f64| frame.transverse(&history.epoch(z)).abs() / (1.0 + z);
     let turning = &history.turning().angular_diameter;
     let step = |z: f64| 1e-3 * (1.0 + z);
     let peak = |z: &&f64| {

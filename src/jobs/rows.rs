@@ -71,7 +71,7 @@ impl<'a, 'b> Rows<'a, 'b> {
             frame,
             inverter,
             verdict: Verdict::new(frame, inverter, conversion.future),
-            wanted: outputs.iter().fold(Wanted::default(), wanted),
+            wanted: frame.wanted(outputs.iter().fold(Wanted::default(), wanted)),
             outputs,
             source,
             given: Vec::new(),

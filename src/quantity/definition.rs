@@ -128,6 +128,8 @@ pub enum Inverse {
     Solved {
         /// The curve's value for a value of the quantity.
         given: fn(f64, &Frame) -> f64,
+        /// Its derivative, from the value and what is given.
+        given_slope: fn(f64, f64) -> f64,
         /// The curve.
         curve: &'static Solved,
     },

@@ -2,7 +2,8 @@
 
 use std::f64::consts::PI;
 
-use crate::expansion::History;
+use crate::expansion::{Epoch, History, Wanted};
+use crate::numerics::two_product;
 
 /// A history with its scales in the units of the catalogue, and its geometry.
 #[derive(Clone, Copy, Debug)]
@@ -43,30 +44,53 @@ impl<'a> Frame<'a> {
         }
     }
 
-    /// The transverse comoving distance for a line-of-sight one, both in c/H0;
-    /// negative between the first and the second antipode of a closed model.
+    /// The transverse comoving distance in c/H0; negative between the first and
+    /// the second antipode of a closed model.
+    ///
+    /// What rounding took from the distance along the line of sight is put back
+    /// to first order: far beyond the radius of curvature sin and sinh see it.
     #[inline]
     #[must_use]
-    pub fn transverse(&self, comoving: f64) -> f64 {
+    pub fn transverse(&self, epoch: &Epoch) -> f64 {
         if self.curvature == 0.0 {
-            comoving
-        } else if self.curvature > 0.0 {
-            libm::sinh(self.root * comoving) / self.root
+            return epoch.comoving;
+        }
+        let (angle, rest) = self.angle(epoch);
+        if self.curvature > 0.0 {
+            (libm::sinh(angle) + rest * libm::cosh(angle)) / self.root
         } else {
-            libm::sin(self.root * comoving) / self.root
+            (libm::sin(angle) + rest * libm::cos(angle)) / self.root
         }
     }
 
-    /// Its derivative with respect to the line-of-sight distance.
+    /// The distance along the line of sight in radii of curvature, and what
+    /// rounding took from it.
+    #[inline]
+    fn angle(&self, epoch: &Epoch) -> (f64, f64) {
+        let (angle, rest) = two_product(self.root, epoch.comoving);
+        (angle, rest + self.root * epoch.comoving_rest)
+    }
+
+    /// Its derivative with respect to the distance along the line of sight.
     #[inline]
     #[must_use]
-    pub fn transverse_slope(&self, comoving: f64) -> f64 {
+    pub fn transverse_slope(&self, epoch: &Epoch) -> f64 {
         if self.curvature == 0.0 {
             1.0
         } else if self.curvature > 0.0 {
-            libm::cosh(self.root * comoving)
+            libm::cosh(self.root * epoch.comoving)
         } else {
-            libm::cos(self.root * comoving)
+            libm::cos(self.root * epoch.comoving)
+        }
+    }
+
+    /// The columns of the history that formulas need here: in curved space the
+    /// rest of the comoving distance too.
+    #[must_use]
+    pub fn wanted(&self, wanted: Wanted) -> Wanted {
+        Wanted {
+            comoving_rest: wanted.comoving_rest || (wanted.comoving && self.curvature != 0.0),
+            ..wanted
         }
     }
 
@@ -79,36 +103,52 @@ impl<'a> Frame<'a> {
 
     /// χ/|tan χ|, the condition of the transverse distance; χ/tanh χ when open.
     #[must_use]
-    pub fn transverse_condition(&self, comoving: f64) -> f64 {
-        let transverse = self.transverse(comoving);
+    pub fn transverse_condition(&self, epoch: &Epoch) -> f64 {
+        let transverse = self.transverse(epoch);
         if transverse == 0.0 {
-            return if comoving == 0.0 { 1.0 } else { f64::INFINITY };
+            return if epoch.comoving == 0.0 {
+                1.0
+            } else {
+                f64::INFINITY
+            };
         }
-        (comoving * self.transverse_slope(comoving) / transverse).abs()
+        (epoch.comoving * self.transverse_slope(epoch) / transverse).abs()
     }
 
-    /// The comoving volume within a distance, whole sky, in (c/H0)³.
+    /// The comoving volume out to an epoch, whole sky, in (c/H0)³.
     ///
-    /// π (2χ − sin 2χ)/|Ω_K|^{3/2} loses its digits for small χ: below 2χ = 2 its
-    /// series in χ² is summed instead.
+    /// π (2χ − sin 2χ)/|Ω_K|^{3/2} loses its digits for small χ: below 2χ = 3 its
+    /// series in χ² is summed instead. The rest of the distance adds 4π D_M² to
+    /// first order.
     #[must_use]
-    pub fn volume(&self, comoving: f64) -> f64 {
-        let cube = comoving * comoving * comoving;
-        let double = 2.0 * self.root * comoving;
-        if double.abs() < 2.0 {
-            let square = 4.0 * self.curvature * comoving * comoving;
-            return 4.0 / 3.0 * PI * cube * sine_deficit(square);
+    pub fn volume(&self, epoch: &Epoch) -> f64 {
+        let along = epoch.comoving;
+        let (angle, rest) = self.angle(epoch);
+        let double = 2.0 * angle;
+        if double.abs() < SERIES_END {
+            let square = 4.0 * self.curvature * along * along;
+            let body = 4.0 / 3.0 * PI * (along * along * along) * sine_deficit(square);
+            let transverse = self.transverse(epoch);
+            return body + 4.0 * PI * transverse * transverse * epoch.comoving_rest;
         }
-        let rest = if self.curvature > 0.0 {
+        let sine = if self.curvature > 0.0 {
+            libm::sinh(angle)
+        } else {
+            libm::sin(angle)
+        };
+        let body = if self.curvature > 0.0 {
             libm::sinh(double) - double
         } else {
             double - libm::sin(double)
         };
-        PI * rest / (self.root * self.root * self.root)
+        PI * (body + 4.0 * sine * sine * rest) / (self.root * self.root * self.root)
     }
 }
 
-/// 6 (sinh y − y)/y³ as a function of y², |y²| ≤ 4; with sin for y² < 0.
+/// Where the closed form of the volume loses no more than a bit.
+const SERIES_END: f64 = 3.0;
+
+/// 6 (sinh y − y)/y³ as a function of y², |y²| ≤ 9; with sin for y² < 0.
 fn sine_deficit(square: f64) -> f64 {
     SINE_DEFICIT
         .iter()
@@ -116,9 +156,9 @@ fn sine_deficit(square: f64) -> f64 {
         .fold(0.0, |sum, term| sum * square + term)
 }
 
-/// 6/(2k + 3)! for k = 0 … 11: the next term is below 1e-18 at y² = 4.
-const SINE_DEFICIT: [f64; 12] = {
-    let mut terms = [1.0; 12];
+/// 6/(2k + 3)! for k = 0 … 14: the next term is below 1e-20 at y² = 9.
+const SINE_DEFICIT: [f64; 15] = {
+    let mut terms = [1.0; 15];
     let mut k = 1;
     while k < terms.len() {
         terms[k] = terms[k - 1] / ((2 * k + 2) * (2 * k + 3)) as f64;
@@ -133,11 +173,11 @@ mod tests {
 
     #[test]
     fn the_series_joins_the_closed_form() {
-        let y = 2.0_f64;
+        let y = 3.0_f64;
         let open = 6.0 * (libm::sinh(y) - y) / (y * y * y);
         let closed = 6.0 * (y - libm::sin(y)) / (y * y * y);
-        assert!((sine_deficit(4.0) / open - 1.0).abs() < 1e-15);
-        assert!((sine_deficit(-4.0) / closed - 1.0).abs() < 1e-15);
+        assert!((sine_deficit(9.0) / open - 1.0).abs() < 1e-15);
+        assert!((sine_deficit(-9.0) / closed - 1.0).abs() < 1e-15);
         assert_eq!(sine_deficit(0.0), 1.0);
     }
 }

@@ -1,7 +1,8 @@
 //! From a quantity back to redshift, on every branch.
 
 use super::knots::{Monotone, monotone_parts};
-use super::{Frame, Inverse, Quantity, Solved};
+use super::solved::Target;
+use super::{Frame, Inverse, Miss, Quantity, Solved};
 use crate::expansion::Curve;
 
 /// The inverse of one quantity in one model, prepared for any number of values.
@@ -123,11 +124,9 @@ impl<'a> Inverter<'a> {
                 scaled.extend(values.iter().map(|value| value / scale));
                 self.frame.history.invert(*curve, scaled, redshifts);
             }
-            Inverse::Solved { given, curve } => {
-                scaled.extend(values.iter().map(|value| given(*value, &self.frame)));
-                let slack = |row: usize| self.slack(values[row]);
-                if let Some(part) = self.parts.get(branch) {
-                    part.solve(&self.frame, curve, (scaled, slack), redshifts, suspect);
+            Inverse::Solved { .. } => {
+                if let (Some(part), Some(target)) = (self.parts.get(branch), self.target()) {
+                    part.solve(&target, values, redshifts, suspect);
                 }
                 return;
             }
@@ -149,28 +148,35 @@ impl<'a> Inverter<'a> {
                 let stretch = if time { 1.0 + redshift } else { 1.0 };
                 f64::EPSILON * (value / scale(&self.frame)).abs() * stretch * epoch.rate
             }
-            Inverse::Solved { given, curve } => {
-                let spread = 0.25 * self.slack(value) * given(value, &self.frame);
-                self.near_turning(curve, spread, redshift)
+            Inverse::Solved { given, .. } => {
+                let given = given(value, &self.frame);
+                let target = self.target();
+                target.map_or(f64::NAN, |target| {
+                    let spread = 0.25 * target.slack(value, given) * given;
+                    self.near_turning(target.curve, spread, redshift)
+                })
             }
         }
     }
 
-    /// The relative rounding of what is solved for: four times that of the value
-    /// and of the way from the value to it.
-    fn slack(&self, value: f64) -> f64 {
-        let Inverse::Solved { given, .. } = self.inverse else {
-            return 0.0;
+    /// What is solved for, of a curve that may turn.
+    fn target(&self) -> Option<Target<'_>> {
+        let Inverse::Solved {
+            given,
+            given_slope,
+            curve,
+        } = self.inverse
+        else {
+            return None;
         };
-        const STEP: f64 = 1e-6;
-        let at = |value: f64| given(value, &self.frame);
-        let condition = (at(value * (1.0 + STEP)) / at(value) - 1.0).abs() / STEP;
-        4.0 * f64::EPSILON
-            * if condition.is_finite() {
-                condition.max(1.0)
-            } else {
-                1.0
-            }
+        let (frame, quantity) = (&self.frame, self.quantity);
+        Some(Target {
+            frame,
+            quantity,
+            curve,
+            given: *given,
+            given_slope: *given_slope,
+        })
     }
 
     /// The solution of spread = |y′| dz + ½ |y″| dz²: next to a turning point the
@@ -215,7 +221,18 @@ impl<'a> Inverter<'a> {
                     *redshift = end;
                 }
             }
+            if redshift.is_nan() && self.is_last(*value, highest) {
+                *redshift = highest;
+            }
         }
+    }
+
+    /// Whether a value that the tables do not find is that of the highest
+    /// redshift but for rounding.
+    fn is_last(&self, value: f64, highest: f64) -> bool {
+        let last = self.quantity.at(highest, &self.frame);
+        (value - last).abs() <= 2.0 * f64::EPSILON * last.abs()
+            && self.miss(value, 0) == Miss::BeyondRange
     }
 
     /// The widest range of redshifts, about z = 1, where rounding cannot move a

@@ -37,6 +37,7 @@ pub(super) fn monotone_parts(frame: &Frame, curve: &Solved, from: f64) -> Vec<Mo
     let inside = |z: &f64| *z > from && *z < to;
     let turning = (curve.turning)(frame.history.turning());
     let mut ends: Vec<f64> = turning.iter().copied().filter(inside).collect();
+    ends.dedup_by(|next, one| *next - *one <= 1e-13 * *next);
     let mut redshifts = spread(frame, from, to);
     for turn in &ends {
         grade(&mut redshifts, *turn);
@@ -80,7 +81,9 @@ fn grade(redshifts: &mut Vec<f64>, turn: f64) {
 
 fn knots(frame: &Frame, curve: &Solved, redshifts: &[f64]) -> Vec<Knot> {
     let mut epochs = Epochs::default();
-    frame.history.epochs(redshifts, curve.wanted, &mut epochs);
+    frame
+        .history
+        .epochs(redshifts, frame.wanted(curve.wanted), &mut epochs);
     let knot = |(row, redshift): (usize, &f64)| {
         let epoch = epochs.row(*redshift, row);
         let (value, slope) = ((curve.value)(&epoch, frame), (curve.slope)(&epoch, frame));

@@ -7,8 +7,8 @@
 
 use super::inverse::ILL_CONDITIONED;
 use super::knots::{Knot, Monotone};
-use super::{Frame, Solved};
-use crate::expansion::Epochs;
+use super::{Frame, Quantity, Solved};
+use crate::expansion::{Epoch, Epochs};
 use crate::numerics::bracketed_root;
 
 /// From a start within some 1e-2 of its interval: 1e-4, 1e-8, rounding.
@@ -18,16 +18,37 @@ const SETTLED: f64 = 1e-7;
 /// Rows solved together.
 const BLOCK: usize = 256;
 
+/// What is solved for, in which model.
+pub(super) struct Target<'a> {
+    pub frame: &'a Frame<'a>,
+    pub quantity: &'static Quantity,
+    pub curve: &'static Solved,
+    /// The curve's value for a value of the quantity, and its derivative.
+    pub given: fn(f64, &Frame) -> f64,
+    pub given_slope: fn(f64, f64) -> f64,
+}
+
+impl Target<'_> {
+    /// By how much of itself rounding may have moved what is given for a value:
+    /// four times that of the value and of the way from it.
+    pub(super) fn slack(&self, value: f64, given: f64) -> f64 {
+        let condition = (value * (self.given_slope)(value, given) / given).abs();
+        4.0 * f64::EPSILON
+            * if condition.is_finite() {
+                condition.max(1.0)
+            } else {
+                1.0
+            }
+    }
+}
+
 impl Monotone {
-    /// The redshifts of values of the curve, NaN where it does not reach them;
-    /// `slack` tells by how much of itself rounding may have moved a value.
-    ///
-    /// `suspect` gains the rows whose redshift the value may not fix to 1e-9.
+    /// The redshifts of values of a quantity, NaN where its curve does not reach
+    /// them; `suspect` gains the rows whose redshift the value may not fix to 1e-9.
     pub(super) fn solve(
         &self,
-        frame: &Frame,
-        curve: &Solved,
-        (values, slack): (&[f64], impl Fn(usize) -> f64),
+        target: &Target,
+        values: &[f64],
         redshifts: &mut [f64],
         suspect: &mut Vec<usize>,
     ) {
@@ -35,51 +56,49 @@ impl Monotone {
         let mut state = [Step::default(); BLOCK];
         let blocks = values.chunks(BLOCK).zip(redshifts.chunks_mut(BLOCK));
         for (number, (values, redshifts)) in blocks.enumerate() {
-            let first_row = number * BLOCK;
-            for (row, (value, redshift)) in values.iter().zip(&mut *redshifts).enumerate() {
-                state[row] = self.start(*value, || slack(first_row + row));
-                *redshift = state[row].redshift;
+            for ((step, value), redshift) in state.iter_mut().zip(values).zip(&mut *redshifts) {
+                *step = self.start(*value, target);
+                *redshift = step.redshift;
             }
-            for _ in 0..STEPS {
-                frame.history.epochs(redshifts, curve.wanted, &mut epochs);
-                for (row, redshift) in redshifts.iter_mut().enumerate() {
-                    let epoch = epochs.row(*redshift, row);
-                    let step = &mut state[row];
-                    step.slope = (curve.slope)(&epoch, frame);
-                    let next =
-                        *redshift - ((curve.value)(&epoch, frame) - values[row]) / step.slope;
-                    let next = next.max(step.low).min(step.high);
-                    step.last = (next - *redshift).abs();
-                    *redshift = next;
+            let wanted = target.frame.wanted(target.curve.wanted);
+            for pass in 1..=STEPS {
+                target.frame.history.epochs(redshifts, wanted, &mut epochs);
+                for (row, (redshift, step)) in redshifts.iter_mut().zip(&mut state).enumerate() {
+                    *redshift = step.improve(&epochs.row(*redshift, row), target, pass == STEPS);
                 }
             }
-            for (row, redshift) in redshifts.iter_mut().enumerate() {
-                let (redshift_of_row, well_fixed) =
-                    state[row].finish(*redshift, values[row], frame, curve);
-                *redshift = redshift_of_row;
+            for (row, (redshift, step)) in redshifts.iter_mut().zip(&state).enumerate() {
+                let well_fixed;
+                (*redshift, well_fixed) = step.finish(*redshift, target);
                 if !well_fixed {
-                    suspect.push(first_row + row);
+                    suspect.push(number * BLOCK + row);
                 }
             }
         }
     }
 
     /// Where Newton starts for a value, and the bracket it must stay in.
-    fn start(&self, value: f64, slack: impl Fn() -> f64) -> Step {
+    fn start(&self, value: f64, target: &Target) -> Step {
+        let given = (target.given)(value, target.frame);
+        let step = Step {
+            value,
+            given,
+            ..Step::default()
+        };
         let ((bottom, _), (top, _)) = (self.bottom(), self.top());
-        if value > bottom.value && value < top.value && !self.is_constant() {
-            return Step::between(self.around(value), value);
+        if given > bottom.value && given < top.value && !self.is_constant() {
+            return step.between(self.around(given));
         }
-        let near = |end: Knot| (value - end.value).abs() <= slack() * end.value;
-        let end = if value >= top.value { top } else { bottom };
+        let near = |end: Knot| (given - end.value).abs() <= target.slack(value, given) * end.value;
+        let end = if given >= top.value { top } else { bottom };
         if self.is_constant() && near(end) {
             // Every redshift has this value: the nearest one is given, and the rest is said.
-            return Step::at(0.0_f64.clamp(self.low, self.high));
+            return step.at(0.0_f64.clamp(self.low, self.high));
         }
         if near(end) {
-            Step::at(end.redshift)
+            step.at(end.redshift)
         } else {
-            Step::default()
+            step
         }
     }
 }
@@ -87,6 +106,8 @@ impl Monotone {
 /// One value on its way.
 #[derive(Clone, Copy, Debug, Default)]
 struct Step {
+    value: f64,
+    given: f64,
     redshift: f64,
     low: f64,
     high: f64,
@@ -98,21 +119,21 @@ struct Step {
 
 impl Step {
     /// A value that belongs to a known redshift.
-    fn at(redshift: f64) -> Step {
+    fn at(self, redshift: f64) -> Step {
         Step {
             redshift,
             low: redshift,
             high: redshift,
             taken: true,
-            ..Step::default()
+            ..self
         }
     }
 
     /// A value between two knots, from the cubic of Hermite for z over the value.
-    fn between((one, other): (Knot, Knot), value: f64) -> Step {
+    fn between(self, (one, other): (Knot, Knot)) -> Step {
         let rise = other.value - one.value;
         let run = other.redshift - one.redshift;
-        let t = (value - one.value) / rise;
+        let t = (self.given - one.value) / rise;
         let (m, n) = (rise / one.slope, rise / other.slope);
         let bend = t * (3.0 * run - 2.0 * m - n + t * (m + n - 2.0 * run));
         let cubic = one.redshift + t * (m + bend);
@@ -131,28 +152,47 @@ impl Step {
             low,
             high,
             taken: true,
-            ..Step::default()
+            ..self
         }
     }
 
+    /// One step of Newton; the final one compares the quantity itself.
+    #[inline]
+    fn improve(&mut self, epoch: &Epoch, target: &Target, is_final: bool) -> f64 {
+        self.slope = (target.curve.slope)(epoch, target.frame);
+        let miss = if is_final {
+            let quantity = (target.quantity.forward.at)(epoch, target.frame);
+            (quantity - self.value) * (target.given_slope)(self.value, self.given)
+        } else {
+            (target.curve.value)(epoch, target.frame) - self.given
+        };
+        let next = (epoch.redshift - miss / self.slope)
+            .max(self.low)
+            .min(self.high);
+        self.last = (next - epoch.redshift).abs();
+        next
+    }
+
     /// The final redshift, and whether the value fixes it well.
-    fn finish(&self, redshift: f64, value: f64, frame: &Frame, curve: &Solved) -> (f64, bool) {
+    fn finish(&self, redshift: f64, target: &Target) -> (f64, bool) {
         if !self.taken {
             return (f64::NAN, true);
         }
-        let fixed = |z: f64| 8.0 * f64::EPSILON * value < ILL_CONDITIONED * (z * self.slope).abs();
+        let rounding = 2.0 * target.slack(self.value, self.given) * self.given;
+        let fixed = |z: f64| rounding < ILL_CONDITIONED * (z * self.slope).abs();
         if self.low == self.high {
             return (self.low, fixed(self.low));
         }
         if self.last <= SETTLED * (self.high - self.low) {
             return (redshift, fixed(redshift));
         }
-        (self.close(value, frame, curve), false)
+        (self.close(target), false)
     }
 
     /// Closes the bracket where Newton has not settled.
-    fn close(&self, value: f64, frame: &Frame, curve: &Solved) -> f64 {
-        let miss = |z: f64| (curve.value)(&frame.history.epoch(z), frame) - value;
+    fn close(&self, target: &Target) -> f64 {
+        let frame = target.frame;
+        let miss = |z: f64| (target.curve.value)(&frame.history.epoch(z), frame) - self.given;
         bracketed_root(self.low, self.high, miss).unwrap_or_else(|| {
             // Both ends round to the same side: the value is that of the nearer one.
             if miss(self.low).abs() <= miss(self.high).abs() {

@@ -65,6 +65,7 @@ pub(super) const TRANSVERSE_COMOVING_DISTANCE: Quantity = Quantity {
     condition: Some(NEAR_ANTIPODES),
     inverse: Some(Inverse::Solved {
         given: |value, _| value,
+        given_slope: |_, _| 1.0,
         curve: &TRANSVERSE,
     }),
     undefined: always,
@@ -88,6 +89,7 @@ pub(super) const ANGULAR_DIAMETER_DISTANCE: Quantity = Quantity {
     condition: Some(NEAR_ANTIPODES),
     inverse: Some(Inverse::Solved {
         given: |value, _| value,
+        given_slope: |_, _| 1.0,
         curve: &ANGULAR_DIAMETER,
     }),
     undefined: always,
@@ -111,6 +113,7 @@ pub(super) const LUMINOSITY_DISTANCE: Quantity = Quantity {
     condition: Some(NEAR_ANTIPODES),
     inverse: Some(Inverse::Solved {
         given: |value, _| value,
+        given_slope: |_, _| 1.0,
         curve: &LUMINOSITY,
     }),
     undefined: always,
@@ -136,6 +139,7 @@ pub(super) const DISTANCE_MODULUS: Quantity = Quantity {
     condition: Some(NEAR_ANTIPODES),
     inverse: Some(Inverse::Solved {
         given: |value, _| libm::exp10((value - 25.0) / 5.0),
+        given_slope: |_, given| given * (std::f64::consts::LN_10 / 5.0),
         curve: &LUMINOSITY,
     }),
     undefined: always,
@@ -169,35 +173,36 @@ pub(super) const LIGHT_TRAVEL_DISTANCE: Quantity = Quantity {
 /// |D_M| in Mpc.
 #[inline]
 pub(super) fn transverse_mpc(epoch: &Epoch, frame: &Frame) -> f64 {
-    frame.hubble_distance_mpc * frame.transverse(epoch.comoving).abs()
+    frame.hubble_distance_mpc * frame.transverse(epoch).abs()
 }
 
 /// Where D_M returns to zero, its relative error grows without bound.
 pub(super) const NEAR_ANTIPODES: Condition = Condition {
     possible: |frame| frame.reaches_antipode(),
-    number: |epoch, frame| frame.transverse_condition(epoch.comoving),
+    number: |epoch, frame| frame.transverse_condition(epoch),
 };
 
 /// d|D_M|/dz in Mpc.
 fn transverse_slope_mpc(epoch: &Epoch, frame: &Frame) -> f64 {
-    let sign = if frame.transverse(epoch.comoving) < 0.0 {
+    let sign = if frame.transverse(epoch) < 0.0 {
         -1.0
     } else {
         1.0
     };
-    sign * frame.hubble_distance_mpc * frame.transverse_slope(epoch.comoving) / epoch.rate
+    sign * frame.hubble_distance_mpc * frame.transverse_slope(epoch) / epoch.rate
 }
 
-/// What |D_M| tends to; a sup that a closed model may reach earlier.
+/// What |D_M| tends to; a closed model may reach more.
 fn transverse_horizon_mpc(frame: &Frame) -> f64 {
-    let horizon = frame
-        .history
-        .conformal_time_today()
-        .unwrap_or(f64::INFINITY);
-    if frame.curvature < 0.0 {
-        f64::INFINITY
-    } else {
-        frame.hubble_distance_mpc * frame.transverse(horizon)
+    match frame.history.conformal_time_today() {
+        Some(comoving) if frame.curvature >= 0.0 => {
+            let horizon = Epoch {
+                comoving,
+                ..Epoch::default()
+            };
+            transverse_mpc(&horizon, frame)
+        }
+        _ => f64::INFINITY,
     }
 }
 

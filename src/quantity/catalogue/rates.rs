@@ -20,6 +20,7 @@ pub(super) const HUBBLE_PARAMETER: Quantity = Quantity {
     condition: None,
     inverse: Some(Inverse::Solved {
         given: |value, _| value,
+        given_slope: |_, _| 1.0,
         curve: &EXPANSION_RATE,
     }),
     undefined: always,

@@ -58,7 +58,7 @@ pub(super) const ALCOCK_PACZYNSKI: Quantity = Quantity {
     scaling: HubbleScaling::None,
     future: false,
     forward: forward!(RATE_AND_COMOVING, |epoch, frame| frame
-        .transverse(epoch.comoving)
+        .transverse(epoch)
         .abs()
         * epoch.rate),
     condition: Some(NEAR_ANTIPODES),

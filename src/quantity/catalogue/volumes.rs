@@ -18,14 +18,15 @@ pub(super) const COMOVING_VOLUME: Quantity = Quantity {
     table_error: Some(|accuracy| 3.0 * accuracy.comoving),
     scaling: HubbleScaling::Power(3),
     future: false,
-    forward: forward!(COMOVING, |epoch, frame| {
+    forward: forward!(PRECISE, |epoch, frame| {
         let cube =
             frame.hubble_distance_mpc * frame.hubble_distance_mpc * frame.hubble_distance_mpc;
-        cube * frame.volume(epoch.comoving)
+        cube * frame.volume(epoch)
     }),
     condition: None,
     inverse: Some(Inverse::Solved {
         given: |value, frame| radius(value) / frame.hubble_distance_mpc,
+        given_slope: |value, given| given / (3.0 * value),
         curve: &VOLUME,
     }),
     undefined: always,
@@ -45,7 +46,7 @@ pub(super) const VOLUME_ELEMENT: Quantity = Quantity {
     scaling: HubbleScaling::Power(3),
     future: false,
     forward: forward!(RATE_AND_COMOVING, |epoch, frame| {
-        let transverse = frame.hubble_distance_mpc * frame.transverse(epoch.comoving);
+        let transverse = frame.hubble_distance_mpc * frame.transverse(epoch);
         frame.hubble_distance_mpc * (transverse * transverse) / epoch.rate
     }),
     condition: Some(NEAR_ANTIPODES),
@@ -67,7 +68,7 @@ pub(super) const VOLUME_AVERAGED_DISTANCE: Quantity = Quantity {
     scaling: HubbleScaling::Power(1),
     future: false,
     forward: forward!(RATE_AND_COMOVING, |epoch, frame| {
-        let transverse = frame.transverse(epoch.comoving).abs();
+        let transverse = frame.transverse(epoch).abs();
         if transverse == 0.0 {
             return 0.0;
         }
@@ -88,6 +89,12 @@ pub(super) const VOLUME_AVERAGED_DISTANCE: Quantity = Quantity {
     },
 };
 
+/// A cube triples the rounding of the distance: its rest is wanted too.
+const PRECISE: Wanted = Wanted {
+    comoving_rest: true,
+    ..COMOVING
+};
+
 /// The radius of a Euclidean ball of this volume.
 fn radius(volume: f64) -> f64 {
     libm::cbrt(0.75 / PI * volume)
@@ -96,11 +103,14 @@ fn radius(volume: f64) -> f64 {
 /// The volume solved for by the radius of a ball that holds it, which grows
 /// like z near today, in units of c/H0.
 static VOLUME: Solved = Solved {
-    wanted: RATE_AND_COMOVING,
+    wanted: Wanted {
+        rate: true,
+        ..PRECISE
+    },
     value: radius_of_volume,
     slope: |epoch, frame| {
         let radius = radius_of_volume(epoch, frame);
-        let transverse = frame.transverse(epoch.comoving);
+        let transverse = frame.transverse(epoch);
         let ratio = if radius == 0.0 {
             1.0
         } else {
@@ -111,11 +121,19 @@ static VOLUME: Solved = Solved {
     turning: |_| &[],
     horizon: |frame| {
         let horizon = frame.history.conformal_time_today();
-        horizon.map_or(f64::INFINITY, |horizon| radius(frame.volume(horizon)))
+        horizon.map_or(f64::INFINITY, |comoving| {
+            radius_of_volume(
+                &Epoch {
+                    comoving,
+                    ..Epoch::default()
+                },
+                frame,
+            )
+        })
     },
     future: false,
 };
 
 fn radius_of_volume(epoch: &Epoch, frame: &Frame) -> f64 {
-    radius(frame.volume(epoch.comoving))
+    radius(frame.volume(epoch))
 }
