@@ -43,7 +43,7 @@ fn condition(quantity: &Quantity, z: f64, frame: &Frame) -> f64 {
         return 1.0;
     }
     frame
-        .transverse_condition(frame.history.epoch(z).comoving)
+        .transverse_condition(&frame.history.epoch(z))
         .clamp(1.0, 1e15)
 }
 

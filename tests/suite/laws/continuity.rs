@@ -105,7 +105,7 @@ fn edges(history: &History) {
 fn antipode(history: &History, z: f64) -> f64 {
     let frame = redfathom::quantity::Frame::of(history);
     frame
-        .transverse_condition(history.epoch(z).comoving)
+        .transverse_condition(&history.epoch(z))
         .min(1e12)
 }
 
