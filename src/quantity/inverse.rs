@@ -123,6 +123,7 @@ impl<'a> Inverter<'a> {
                 let scale = scale(&self.frame);
                 scaled.extend(values.iter().map(|value| value / scale));
                 self.frame.history.invert(*curve, scaled, redshifts);
+                self.leave_out_beginning(*curve, scaled, redshifts);
             }
             Inverse::Solved { .. } => {
                 if let (Some(part), Some(target)) = (self.parts.get(branch), self.target()) {
@@ -223,6 +224,24 @@ impl<'a> Inverter<'a> {
             }
             if redshift.is_nan() && self.is_last(*value, highest) {
                 *redshift = highest;
+            }
+        }
+    }
+
+    /// No redshift has a lookback time of the whole age, though the highest ones
+    /// round to it.
+    fn leave_out_beginning(&self, curve: Curve, scaled: &[f64], redshifts: &mut [f64]) {
+        let Some(age) = self
+            .frame
+            .history
+            .age_today()
+            .filter(|_| curve == Curve::Lookback)
+        else {
+            return;
+        };
+        for (redshift, lookback) in redshifts.iter_mut().zip(scaled) {
+            if *lookback >= age {
+                *redshift = f64::NAN;
             }
         }
     }

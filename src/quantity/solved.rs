@@ -15,6 +15,10 @@ use crate::numerics::bracketed_root;
 const STEPS: usize = 3;
 /// A last step below this share of its interval leaves its square as error.
 const SETTLED: f64 = 1e-7;
+/// A quantity that comes this near to the value needs no better redshift.
+const CLOSE: f64 = 1.5 * f64::EPSILON;
+/// Redshifts tried on each side for a better one.
+const NEIGHBOURS: u32 = 3;
 /// Rows solved together.
 const BLOCK: usize = 256;
 
@@ -74,6 +78,7 @@ impl Monotone {
                     suspect.push(number * BLOCK + row);
                 }
             }
+            polish(target, values, redshifts, &mut epochs);
         }
     }
 
@@ -100,6 +105,38 @@ impl Monotone {
         } else {
             step
         }
+    }
+}
+
+/// Where rounding left the quantity further off than it need be, takes the best
+/// of the neighbouring redshifts.
+fn polish(target: &Target, values: &[f64], redshifts: &mut [f64], epochs: &mut Epochs) {
+    let frame = target.frame;
+    let evaluated: Vec<f64> = redshifts
+        .iter()
+        .map(|z| if z.is_nan() { 0.0 } else { *z })
+        .collect();
+    frame
+        .history
+        .epochs(&evaluated, frame.wanted(target.curve.wanted), epochs);
+    for (row, (redshift, value)) in redshifts.iter_mut().zip(values).enumerate() {
+        let at = |epoch: &Epoch| (target.quantity.forward.at)(epoch, frame);
+        let miss = (at(&epochs.row(*redshift, row)) - value).abs();
+        if miss <= CLOSE * value.abs() || redshift.is_nan() || *redshift == 0.0 {
+            continue;
+        }
+        let mut best = (miss, *redshift);
+        let (mut below, mut above) = (*redshift, *redshift);
+        for _ in 0..NEIGHBOURS {
+            (below, above) = (below.next_down(), above.next_up());
+            for z in [below, above] {
+                let miss = (at(&frame.history.epoch(z)) - value).abs();
+                if miss < best.0 {
+                    best = (miss, z);
+                }
+            }
+        }
+        *redshift = best.1;
     }
 }
 
@@ -191,15 +228,11 @@ impl Step {
 
     /// Closes the bracket where Newton has not settled.
     fn close(&self, target: &Target) -> f64 {
-        let frame = target.frame;
-        let miss = |z: f64| (target.curve.value)(&frame.history.epoch(z), frame) - self.given;
+        let miss = |z: f64| target.quantity.at(z, target.frame) - self.value;
         bracketed_root(self.low, self.high, miss).unwrap_or_else(|| {
             // Both ends round to the same side: the value is that of the nearer one.
-            if miss(self.low).abs() <= miss(self.high).abs() {
-                self.low
-            } else {
-                self.high
-            }
+            let nearer_low = miss(self.low).abs() <= miss(self.high).abs();
+            if nearer_low { self.low } else { self.high }
         })
     }
 }

@@ -17,7 +17,8 @@ fn rows_and_blocks_agree() {
         let redshifts: Vec<f64> = model.table.rows.iter().map(|row| row.0).collect();
         let mut epochs = Epochs::default();
         for quantity in QUANTITIES {
-            for (wanted, block) in [(quantity.forward.wanted, 7), (Wanted::ALL, redshifts.len())] {
+            let needed = frame.wanted(quantity.forward.wanted);
+            for (wanted, block) in [(needed, 7), (Wanted::ALL, redshifts.len())] {
                 for redshifts in redshifts.chunks(block) {
                     model.history.epochs(redshifts, wanted, &mut epochs);
                     let mut values = vec![0.0; redshifts.len()];
