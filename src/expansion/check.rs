@@ -15,7 +15,7 @@ use crate::numerics::Chebyshev;
 /// Rounding of one evaluation: of the polynomial, its argument and the final sum.
 const EVALUATION: f64 = 3.0 * f64::EPSILON;
 /// Rounding of one comparison: of E, of the polynomial and of their quotient.
-const COMPARISON: f64 = 4.0 * f64::EPSILON;
+const COMPARISON: f64 = 6.0 * f64::EPSILON;
 /// What a difference beyond rounding counts.
 const UNSEEN: f64 = 4.0;
 
