@@ -9,3 +9,4 @@ mod neutrinos;
 pub(crate) mod references;
 mod report;
 mod stated;
+mod through;

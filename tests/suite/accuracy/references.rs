@@ -55,12 +55,6 @@ pub(crate) fn redshift_alone() -> &'static Table {
     ALONE.get_or_init(|| Table::read(&text(&values().join("redshift-alone.tsv"))))
 }
 
-/// The universe of a name.
-pub(crate) fn named(name: &str) -> &'static Reference {
-    let found = whole().iter().find(|reference| reference.name == name);
-    found.unwrap_or_else(|| panic!("no reference is called {name}"))
-}
-
 pub(super) fn values() -> PathBuf {
     Path::new(env!("CARGO_MANIFEST_DIR")).join("tests/references/values")
 }

@@ -94,7 +94,7 @@ fn edges(history: &History) {
             near(
                 left,
                 right,
-                4e-15 * condition,
+                4e-15 * condition + 8.0 * checked(history),
                 scale,
                 &format!("{} across {edge:e}", quantity.name),
             );
@@ -102,11 +102,20 @@ fn edges(history: &History) {
     }
 }
 
+/// The largest error that a history states of its tables.
+fn checked(history: &History) -> f64 {
+    let accuracy = history.accuracy();
+    let integrals = accuracy.comoving.max(accuracy.lookback);
+    accuracy
+        .rate
+        .max(integrals)
+        .max(accuracy.conformal)
+        .max(accuracy.age)
+}
+
 fn antipode(history: &History, z: f64) -> f64 {
     let frame = redfathom::quantity::Frame::of(history);
-    frame
-        .transverse_condition(&history.epoch(z))
-        .min(1e12)
+    frame.transverse_condition(&history.epoch(z)).min(1e12)
 }
 
 proptest! {

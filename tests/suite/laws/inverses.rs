@@ -51,14 +51,16 @@ fn round_trips(history: &History, redshifts: &[f64]) {
             if !value.is_finite() {
                 continue;
             }
-            // By how much z must move before the value does: 32 ulp of it.
+            // By how much z must move before the value does, with room for χ/|tan χ|: 32 ulp of it.
             let frame = redfathom::quantity::Frame::of(history);
             let slope_over = |step: f64| {
                 (quantity.at(z + step, &frame) - quantity.at(z - step, &frame)).abs() / (2.0 * step)
             };
             // The nearer one too: a volume hardly grows in the last stretch before an antipode.
             let slope = slope_over(1e-4 * z).min(slope_over(1e-7 * z));
-            let spread = 32.0 * f64::EPSILON * (value.abs().max(4.0 * f64::EPSILON) / slope + z);
+            let condition = frame.transverse_condition(&history.epoch(*z)).max(1.0);
+            let noise = 32.0 * f64::EPSILON * condition;
+            let spread = noise * (value.abs().max(4.0 * f64::EPSILON) / slope + z);
             // Where the value hardly fixes z, or a turning point is near, other tests look.
             if spread.is_nan() || spread > 1e-4 * z {
                 continue;
