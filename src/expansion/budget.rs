@@ -88,7 +88,12 @@ impl Densities {
         let rest =
             self.evolving_difference(redshift) + self.massive_difference(redshift, stretch.hi);
         let difference = radiation + cold_matter + constant + rest;
-        let rate = (square + -difference).sqrt();
+        let mut rate_squared = square + -difference;
+        if rate_squared.hi < 0.5 * square.hi {
+            // What is left of v² has lost digits: the sum of the terms has not.
+            rate_squared = DoubleDouble::from(self.rate_squared(stretch.hi));
+        }
+        let rate = rate_squared.sqrt();
         (difference / (stretch + rate)).value()
     }
 
