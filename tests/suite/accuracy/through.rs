@@ -23,7 +23,7 @@ fn find<'a>(model: &'a Reference, name: &str) -> Option<(&'a Table, usize)> {
         .find_map(|table| Some((table, table.column(name)?)))
 }
 
-fn cell<'a>((table, column): (&'a Table, usize), z: f64) -> Option<(&'a str, f64)> {
+fn cell((table, column): (&Table, usize), z: f64) -> Option<(&str, f64)> {
     let (_, cells) = table.rows.iter().find(|row| row.0 == z)?;
     match &cells[column] {
         Cell::Value { text, condition } => Some((text, *condition)),
