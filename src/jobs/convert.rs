@@ -84,18 +84,12 @@ pub fn convert(conversion: &Conversion) -> Result<Converted, ConvertFault> {
     };
     let mut rows = Rows::new(frame, &inverter, conversion, source, &scales);
     let (tables, remarks) = evaluate(conversion, &chosen, &mut rows);
-    let mut by_column: Vec<Vec<Vec<f64>>> = scales.iter().map(|_| Vec::new()).collect();
-    for column_of_branch in tables {
-        for (column, values) in by_column.iter_mut().zip(column_of_branch) {
-            column.push(values);
-        }
-    }
     let column = |((output, scale), branches)| column(conversion, output, scale, branches);
     let columns = conversion
         .to
         .iter()
         .zip(&scales)
-        .zip(by_column)
+        .zip(tables)
         .map(column)
         .collect();
     let ranges = if ranges.len() > 1 { ranges } else { Vec::new() };
@@ -111,30 +105,24 @@ pub fn convert(conversion: &Conversion) -> Result<Converted, ConvertFault> {
     })
 }
 
-/// The columns on each chosen branch, block by block.
+/// Each column on each chosen branch, block by block.
 fn evaluate(
     conversion: &Conversion,
     chosen: &[usize],
     rows: &mut Rows,
 ) -> (Vec<Vec<Vec<f64>>>, Remarks) {
     let values = conversion.from.values;
-    let empty = |_: &usize| {
-        conversion
-            .to
-            .iter()
-            .map(|_| vec![0.0; values.len()])
-            .collect()
-    };
-    let mut tables: Vec<Vec<Vec<f64>>> = chosen.iter().map(empty).collect();
+    let empty = |_: &Output| chosen.iter().map(|_| vec![0.0; values.len()]).collect();
+    let mut tables: Vec<Vec<Vec<f64>>> = conversion.to.iter().map(empty).collect();
     let mut remarks = Remarks::default();
     for (number, block) in values.chunks(BLOCK).enumerate() {
-        for (slot, (branch, table)) in chosen.iter().zip(&mut tables).enumerate() {
+        for (slot, branch) in chosen.iter().enumerate() {
             let place = Place {
                 first_row: number * BLOCK,
                 branch: *branch,
-                repeated: slot > 0,
+                slot,
             };
-            rows.evaluate(block, place, table);
+            rows.evaluate(block, place, &mut tables);
         }
         remarks.take_block(&mut rows.remarks, values.len());
     }

@@ -16,8 +16,8 @@ pub(super) struct Place {
     pub first_row: usize,
     /// The branch, from 0.
     pub branch: usize,
-    /// Whether the same rows were evaluated on another branch before.
-    pub repeated: bool,
+    /// Its place among the branches asked for.
+    pub slot: usize,
 }
 
 /// Evaluates blocks of rows; keeps its buffers from one to the next.
@@ -82,8 +82,8 @@ impl<'a, 'b> Rows<'a, 'b> {
         }
     }
 
-    /// Fills the rows of a block in every column of `table`.
-    pub(super) fn evaluate(&mut self, values: &[f64], place: Place, table: &mut [Vec<f64>]) {
+    /// Fills the rows of a block in every column, for one branch.
+    pub(super) fn evaluate(&mut self, values: &[f64], place: Place, tables: &mut [Vec<Vec<f64>>]) {
         self.given.clear();
         self.given.extend_from_slice(values);
         self.source.apply_all(&mut self.given);
@@ -96,8 +96,12 @@ impl<'a, 'b> Rows<'a, 'b> {
         self.frame
             .history
             .epochs(&self.solution.redshifts, self.wanted, &mut self.epochs);
-        for (number, column) in table.iter_mut().enumerate() {
-            if let Some(cells) = column.get_mut(place.first_row..place.first_row + values.len()) {
+        let rows = place.first_row..place.first_row + values.len();
+        for (number, branches) in tables.iter_mut().enumerate() {
+            if let Some(cells) = branches
+                .get_mut(place.slot)
+                .and_then(|column| column.get_mut(rows.clone()))
+            {
                 self.fill(number, cells, place);
             }
         }
@@ -119,7 +123,7 @@ impl<'a, 'b> Rows<'a, 'b> {
             self.standings.push(standing);
             let Some((code, detail)) = said else { continue };
             // What the value itself is amiss with was said on the first branch.
-            if !place.repeated {
+            if place.slot == 0 {
                 self.remarks.push(remark(place, row, None, code, detail));
             } else if !matches!(code, Code::Missing | Code::NotFinite) {
                 let detail = Detail::Branch(place.branch as u32 + 1);

@@ -97,8 +97,8 @@ impl<'a> Frame<'a> {
     /// Whether light comes from beyond the antipode of a closed model, or nearly so.
     #[must_use]
     pub fn reaches_antipode(&self) -> bool {
-        let farthest = self.history.epoch(self.history.range().1).comoving;
-        self.curvature < 0.0 && self.root * farthest > 3.0
+        let farthest = || self.history.epoch(self.history.range().1).comoving;
+        self.curvature < 0.0 && self.root * farthest() > 3.0
     }
 
     /// χ/|tan χ|, the condition of the transverse distance; χ/tanh χ when open.

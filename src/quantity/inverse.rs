@@ -3,7 +3,7 @@
 use super::knots::{Monotone, monotone_parts};
 use super::solved::Target;
 use super::{Frame, Inverse, Miss, Quantity, Solved};
-use crate::expansion::Curve;
+use crate::expansion::{Curve, Epoch, Epochs, Wanted};
 
 /// The inverse of one quantity in one model, prepared for any number of values.
 #[derive(Clone, Debug)]
@@ -143,11 +143,8 @@ impl<'a> Inverter<'a> {
     pub fn uncertainty(&self, value: f64, redshift: f64) -> f64 {
         match self.inverse {
             Inverse::Direct { sensitivity, .. } => f64::EPSILON * sensitivity(redshift),
-            Inverse::Table { scale, curve } => {
-                let epoch = self.frame.history.epoch(redshift);
-                let time = matches!(curve, Curve::Age | Curve::Lookback);
-                let stretch = if time { 1.0 + redshift } else { 1.0 };
-                f64::EPSILON * (value / scale(&self.frame)).abs() * stretch * epoch.rate
+            Inverse::Table { .. } => {
+                self.spread_in_table(value, &self.frame.history.epoch(redshift))
             }
             Inverse::Solved { given, .. } => {
                 let given = given(value, &self.frame);
@@ -257,24 +254,65 @@ impl<'a> Inverter<'a> {
     /// The widest range of redshifts, about z = 1, where rounding cannot move a
     /// redshift by a share of 1e-9; a margin of 8 stands for what lies between edges.
     fn find_settled(&self) -> (f64, f64) {
-        if matches!(self.inverse, Inverse::Solved { .. }) {
-            return (0.0, f64::INFINITY);
+        const MARGIN: f64 = 8.0;
+        let (lowest, highest) = self.frame.history.range();
+        match self.inverse {
+            Inverse::Solved { .. } => (lowest, highest),
+            Inverse::Direct { sensitivity, .. } => {
+                // The sensitivity per redshift never falls: one edge bounds all below it.
+                let calm = |z: f64| MARGIN * f64::EPSILON * sensitivity(z) < ILL_CONDITIONED * z;
+                let edges = self.frame.history.edges().iter().copied();
+                let high = if calm(highest) {
+                    highest
+                } else {
+                    edges.filter(|edge| calm(*edge)).fold(0.0, f64::max)
+                };
+                (
+                    2.0 * MARGIN * f64::EPSILON * sensitivity(0.0) / ILL_CONDITIONED,
+                    high,
+                )
+            }
+            Inverse::Table { .. } => {
+                let edges: Vec<f64> = self
+                    .frame
+                    .history
+                    .edges()
+                    .iter()
+                    .copied()
+                    .filter(|edge| *edge >= 0.0 && *edge <= highest)
+                    .collect();
+                let wanted = Wanted {
+                    rate: true,
+                    ..self.quantity.forward.wanted
+                };
+                let mut epochs = Epochs::default();
+                self.frame.history.epochs(&edges, wanted, &mut epochs);
+                let spread = |row: usize, z: f64| {
+                    let epoch = epochs.row(z, row);
+                    MARGIN
+                        * self.spread_in_table(
+                            (self.quantity.forward.at)(&epoch, &self.frame),
+                            &epoch,
+                        )
+                };
+                let low = edges
+                    .first()
+                    .map_or(0.0, |today| 2.0 * spread(0, *today) / ILL_CONDITIONED);
+                let rows = edges.iter().enumerate().skip(1);
+                let calm = rows.take_while(|(row, z)| spread(*row, **z) < ILL_CONDITIONED * **z);
+                (low, calm.last().map_or(f64::NEG_INFINITY, |(_, z)| *z))
+            }
         }
-        let calm = |z: &&f64| {
-            let value = self.quantity.at(**z, &self.frame);
-            8.0 * self.uncertainty(value, **z) < ILL_CONDITIONED * z.abs()
+    }
+
+    /// By how much the rounding of a value moves the redshift that a table finds.
+    fn spread_in_table(&self, value: f64, epoch: &Epoch) -> f64 {
+        let Inverse::Table { scale, curve } = self.inverse else {
+            return f64::NAN;
         };
-        let (_, highest) = self.frame.history.range();
-        let edges = self
-            .frame
-            .history
-            .edges()
-            .iter()
-            .filter(|edge| **edge > 0.0 && **edge <= highest);
-        let high = edges.take_while(calm).last();
-        let low =
-            16.0 * self.uncertainty(self.quantity.at(0.0, &self.frame), 0.0) / ILL_CONDITIONED;
-        (low, high.copied().unwrap_or(f64::NEG_INFINITY))
+        let time = matches!(curve, Curve::Age | Curve::Lookback);
+        let stretch = if time { 1.0 + epoch.redshift } else { 1.0 };
+        f64::EPSILON * (value / scale(&self.frame)).abs() * stretch * epoch.rate
     }
 }
 

@@ -17,7 +17,7 @@ fn accepted() {
         ("Glyr", "lyr", 1e9),
         ("AU", "m", 149_597_870_700.0),
         // IAU 2015 resolution B2: 648000/π au.
-        ("pc", "m", 3.085_677_581_491_367_3e16),
+        ("pc", "m", 3.085_677_581_491_367e16),
         ("kpc/arcsec", "kpc/arcmin", 60.0),
         ("Mpc/deg", "kpc/arcsec", 1.0 / 3.6),
         ("Mpc**3", "kpc**3", 1e9),

@@ -61,7 +61,7 @@ pub(super) const TRANSVERSE_COMOVING_DISTANCE: Quantity = Quantity {
     table_error: Some(|accuracy| accuracy.comoving),
     scaling: HubbleScaling::Power(1),
     future: false,
-    forward: forward!(COMOVING, |epoch, frame| transverse_mpc(epoch, frame)),
+    forward: forward!(COMOVING, transverse_mpc),
     condition: Some(NEAR_ANTIPODES),
     inverse: Some(Inverse::Solved {
         given: |value, _| value,

@@ -17,6 +17,7 @@ pub fn column_name(
     let mut name = quantity.name.to_owned();
     let part = |positive: bool| {
         let of_sign = unit
+            .0
             .factors
             .iter()
             .filter(move |factor| (factor.power > 0) == positive);

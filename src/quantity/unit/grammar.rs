@@ -2,7 +2,9 @@
 //! term = symbol ['**' power] | '(' expression ')'.
 
 use super::symbols::{PREFIXES, SYMBOLS, Symbol, ten_to};
-use super::{Dimension, Factor, Unit, UnitFault};
+use std::sync::Arc;
+
+use super::{Dimension, Factor, Parts, Unit, UnitFault};
 
 /// The longest unit that is read.
 const LONGEST: usize = 64;
@@ -18,10 +20,7 @@ pub(super) fn parse(text: &str) -> Result<Unit, UnitFault> {
     let mut reader = Reader {
         text,
         rest: text,
-        unit: Unit {
-            text: text.to_owned(),
-            ..Unit::dimensionless()
-        },
+        unit: Parts::one(text),
     };
     if text.len() > LONGEST {
         return Err(reader.malformed("it is longer than 64 bytes"));
@@ -41,13 +40,13 @@ pub(super) fn parse(text: &str) -> Result<Unit, UnitFault> {
     if !(size.is_finite() && size > 0.0) {
         return Err(reader.malformed("its size is out of range"));
     }
-    Ok(reader.unit)
+    Ok(Unit(Arc::new(reader.unit)))
 }
 
 struct Reader<'a> {
     text: &'a str,
     rest: &'a str,
-    unit: Unit,
+    unit: Parts,
 }
 
 impl Reader<'_> {

@@ -7,17 +7,24 @@ mod grammar;
 mod scale;
 mod symbols;
 
+use std::sync::{Arc, LazyLock};
+
 use thiserror::Error;
 
 pub use column_name::column_name;
 pub use dimension::Dimension;
 pub use scale::Scale;
 
+use super::QUANTITIES;
 use crate::numerics::DoubleDouble;
 
 /// A unit as somebody wrote it, understood.
 #[derive(Clone, Debug, PartialEq)]
-pub struct Unit {
+pub struct Unit(Arc<Parts>);
+
+/// What a unit is made of.
+#[derive(Clone, Debug, PartialEq)]
+struct Parts {
     text: String,
     factors: Vec<Factor>,
     dimension: Dimension,
@@ -73,32 +80,37 @@ impl Unit {
         grammar::parse(text)
     }
 
-    /// A unit of the catalogue, known to be one: a test reads them all.
+    /// A unit of the catalogue, read once; a test reads them all.
     pub(super) fn of_catalogue(text: &str) -> Unit {
-        Unit::parse(text).unwrap_or_else(|_| Unit::dimensionless())
+        static UNITS: LazyLock<Vec<Unit>> = LazyLock::new(|| {
+            let mut texts: Vec<&str> = QUANTITIES.iter().map(|quantity| quantity.unit).collect();
+            texts.sort_unstable();
+            texts.dedup();
+            texts
+                .iter()
+                .filter_map(|text| Unit::parse(text).ok())
+                .collect()
+        });
+        let known = UNITS.iter().find(|unit| unit.text() == text);
+        known.cloned().unwrap_or_else(Unit::dimensionless)
     }
 
     /// The unit of pure numbers.
     #[must_use]
     pub fn dimensionless() -> Unit {
-        Unit {
-            text: "1".to_owned(),
-            factors: Vec::new(),
-            dimension: Dimension::default(),
-            size: DoubleDouble::from(1.0),
-        }
+        Unit(Arc::new(Parts::one("1")))
     }
 
     /// As it was written.
     #[must_use]
     pub fn text(&self) -> &str {
-        &self.text
+        &self.0.text
     }
 
     /// What it measures.
     #[must_use]
     pub fn dimension(&self) -> Dimension {
-        self.dimension
+        self.0.dimension
     }
 
     /// The scale that takes numbers in this unit to numbers in another.
@@ -106,18 +118,33 @@ impl Unit {
     /// # Errors
     /// [`UnitFault::Mismatch`] when they do not measure the same.
     pub fn to(&self, other: &Unit) -> Result<Scale, UnitFault> {
-        if self.dimension != other.dimension {
+        if Arc::ptr_eq(&self.0, &other.0) {
+            return Ok(Scale::IDENTITY);
+        }
+        if self.0.dimension != other.0.dimension {
             return Err(UnitFault::Mismatch {
-                unit: self.text.clone(),
-                wanted: other.text.clone(),
+                unit: self.0.text.clone(),
+                wanted: other.0.text.clone(),
             });
         }
-        Ok(Scale::ratio(self.size, other.size))
+        Ok(Scale::ratio(self.0.size, other.0.size))
+    }
+}
+
+impl Parts {
+    /// Nothing but its text, of size 1.
+    fn one(text: &str) -> Parts {
+        Parts {
+            text: text.to_owned(),
+            factors: Vec::new(),
+            dimension: Dimension::default(),
+            size: DoubleDouble::from(1.0),
+        }
     }
 }
 
 impl std::fmt::Display for Unit {
     fn fmt(&self, formatter: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
-        formatter.write_str(&self.text)
+        formatter.write_str(&self.0.text)
     }
 }
