@@ -146,8 +146,8 @@ impl<'a, 'b> Rows<'a, 'b> {
         }
         if let Some(condition) = target.condition {
             for (row, (cell, redshift)) in cells.iter().zip(&self.solution.redshifts).enumerate() {
-                let number_of_row =
-                    (condition.number)(&self.epochs.row(*redshift, row), &self.frame);
+                let epoch = self.epochs.row(*redshift, row);
+                let number_of_row = (condition.number)(*cell, &epoch, &self.frame);
                 if cell.is_finite() && number_of_row * f64::EPSILON > ILL_CONDITIONED {
                     self.remarks.push(remark(
                         place,

@@ -92,8 +92,8 @@ pub struct Forward {
 pub struct Condition {
     /// Whether it can grow without bound in a model.
     pub possible: fn(&Frame) -> bool,
-    /// The number.
-    pub number: fn(&Epoch, &Frame) -> f64,
+    /// The number, where the quantity has a value.
+    pub number: fn(f64, &Epoch, &Frame) -> f64,
 }
 
 /// Rows of a history that lie ready to be read.

@@ -179,7 +179,7 @@ pub(super) fn transverse_mpc(epoch: &Epoch, frame: &Frame) -> f64 {
 /// Where D_M returns to zero, its relative error grows without bound.
 pub(super) const NEAR_ANTIPODES: Condition = Condition {
     possible: |frame| frame.reaches_antipode(),
-    number: |epoch, frame| frame.transverse_condition(epoch),
+    number: |_, epoch, frame| frame.transverse_condition(epoch),
 };
 
 /// d|D_M|/dz in Mpc.

@@ -67,14 +67,7 @@ pub(super) const DECELERATION_PARAMETER: Quantity = Quantity {
     }),
     condition: Some(Condition {
         possible: |_| true,
-        number: |epoch, frame| {
-            let deceleration = frame
-                .history
-                .densities()
-                .composition(epoch.redshift)
-                .deceleration;
-            (1.0 + deceleration.abs()) / deceleration.abs()
-        },
+        number: |deceleration, _, _| (1.0 + deceleration.abs()) / deceleration.abs(),
     }),
     inverse: None,
     undefined: always,
@@ -115,7 +108,7 @@ pub(super) const VELOCITY_DRIFT: Quantity = Quantity {
     forward: forward!(RATE, |epoch, frame| {
         drift(epoch, frame) / (1.0 + epoch.redshift) * (SPEED_OF_LIGHT_CM_S / years(frame))
     }),
-    condition: Some(NEAR_STANDSTILL),
+    condition: Some(NEAR_STANDSTILL_OF_VELOCITY),
     inverse: None,
     undefined: always,
     formula: "dv/dt = c ż/(1+z)",
@@ -143,13 +136,22 @@ fn drift(epoch: &Epoch, frame: &Frame) -> f64 {
 
 const NEAR_STANDSTILL: Condition = Condition {
     possible: |_| true,
-    number: |epoch, frame| {
+    number: |drift_per_year, epoch, frame| {
         let terms = epoch.redshift.abs() + (epoch.rate - 1.0).abs();
         if epoch.redshift == 0.0 {
             1.0
         } else {
-            terms / drift(epoch, frame).abs()
+            terms / (drift_per_year * years(frame)).abs()
         }
+    },
+};
+
+/// The same for a velocity per year.
+const NEAR_STANDSTILL_OF_VELOCITY: Condition = Condition {
+    possible: |_| true,
+    number: |velocity_per_year, epoch, frame| {
+        let drift_per_year = velocity_per_year * (1.0 + epoch.redshift) / SPEED_OF_LIGHT_CM_S;
+        (NEAR_STANDSTILL.number)(drift_per_year, epoch, frame)
     },
 };
 
