@@ -2,8 +2,8 @@
 
 use super::knots::{Monotone, monotone_parts};
 use super::solved::Target;
-use super::{Frame, Inverse, Miss, Quantity, Solved};
-use crate::expansion::{Curve, Epoch, Epochs, Wanted};
+use super::{Frame, Inverse, Miss, Quantity};
+use crate::expansion::Curve;
 
 /// The inverse of one quantity in one model, prepared for any number of values.
 #[derive(Clone, Debug)]
@@ -27,9 +27,6 @@ pub struct Solution {
     pub suspect: Vec<usize>,
     scaled: Vec<f64>,
 }
-
-/// The relative change by rounding of the input that makes a value ill conditioned.
-pub const ILL_CONDITIONED: f64 = 1e-9;
 
 impl<'a> Inverter<'a> {
     /// Prepares the inverse; `None` for quantities that have none.
@@ -138,27 +135,8 @@ impl<'a> Inverter<'a> {
         suspect.extend(redshifts.iter().enumerate().filter_map(unsettled));
     }
 
-    /// By how much the rounding of a value moves its redshift.
-    #[must_use]
-    pub fn uncertainty(&self, value: f64, redshift: f64) -> f64 {
-        match self.inverse {
-            Inverse::Direct { sensitivity, .. } => f64::EPSILON * sensitivity(redshift),
-            Inverse::Table { .. } => {
-                self.spread_in_table(value, &self.frame.history.epoch(redshift))
-            }
-            Inverse::Solved { given, .. } => {
-                let given = given(value, &self.frame);
-                let target = self.target();
-                target.map_or(f64::NAN, |target| {
-                    let spread = 0.25 * target.slack(value, given) * given;
-                    self.near_turning(target.curve, spread, redshift)
-                })
-            }
-        }
-    }
-
     /// What is solved for, of a curve that may turn.
-    fn target(&self) -> Option<Target<'_>> {
+    pub(super) fn target(&self) -> Option<Target<'_>> {
         let Inverse::Solved {
             given,
             given_slope,
@@ -175,22 +153,6 @@ impl<'a> Inverter<'a> {
             given: *given,
             given_slope: *given_slope,
         })
-    }
-
-    /// The solution of spread = |y′| dz + ½ |y″| dz²: next to a turning point the
-    /// slope alone would promise nothing.
-    fn near_turning(&self, curve: &Solved, spread: f64, redshift: f64) -> f64 {
-        let (lowest, highest) = self.frame.history.range();
-        let slope = |z: f64| {
-            (curve.slope)(
-                &self.frame.history.epoch(z.clamp(lowest, highest)),
-                &self.frame,
-            )
-        };
-        let step = 1e-5 * (1.0 + redshift);
-        let bend = ((slope(redshift + step) - slope(redshift - step)) / (2.0 * step)).abs();
-        let slope = slope(redshift).abs();
-        2.0 * spread / (slope + (slope * slope + 2.0 * bend * spread).sqrt())
     }
 
     /// Values that are today's, or those of an end of the history, but for their
@@ -249,70 +211,6 @@ impl<'a> Inverter<'a> {
         let last = self.quantity.at(highest, &self.frame);
         (value - last).abs() <= 2.0 * f64::EPSILON * last.abs()
             && self.miss(value, 0) == Miss::BeyondRange
-    }
-
-    /// The widest range of redshifts, about z = 1, where rounding cannot move a
-    /// redshift by a share of 1e-9; a margin of 8 stands for what lies between edges.
-    fn find_settled(&self) -> (f64, f64) {
-        const MARGIN: f64 = 8.0;
-        let (lowest, highest) = self.frame.history.range();
-        match self.inverse {
-            Inverse::Solved { .. } => (lowest, highest),
-            Inverse::Direct { sensitivity, .. } => {
-                // The sensitivity per redshift never falls: one edge bounds all below it.
-                let calm = |z: f64| MARGIN * f64::EPSILON * sensitivity(z) < ILL_CONDITIONED * z;
-                let edges = self.frame.history.edges().iter().copied();
-                let high = if calm(highest) {
-                    highest
-                } else {
-                    edges.filter(|edge| calm(*edge)).fold(0.0, f64::max)
-                };
-                (
-                    2.0 * MARGIN * f64::EPSILON * sensitivity(0.0) / ILL_CONDITIONED,
-                    high,
-                )
-            }
-            Inverse::Table { .. } => {
-                let edges: Vec<f64> = self
-                    .frame
-                    .history
-                    .edges()
-                    .iter()
-                    .copied()
-                    .filter(|edge| *edge >= 0.0 && *edge <= highest)
-                    .collect();
-                let wanted = Wanted {
-                    rate: true,
-                    ..self.quantity.forward.wanted
-                };
-                let mut epochs = Epochs::default();
-                self.frame.history.epochs(&edges, wanted, &mut epochs);
-                let spread = |row: usize, z: f64| {
-                    let epoch = epochs.row(z, row);
-                    MARGIN
-                        * self.spread_in_table(
-                            (self.quantity.forward.at)(&epoch, &self.frame),
-                            &epoch,
-                        )
-                };
-                let low = edges
-                    .first()
-                    .map_or(0.0, |today| 2.0 * spread(0, *today) / ILL_CONDITIONED);
-                let rows = edges.iter().enumerate().skip(1);
-                let calm = rows.take_while(|(row, z)| spread(*row, **z) < ILL_CONDITIONED * **z);
-                (low, calm.last().map_or(f64::NEG_INFINITY, |(_, z)| *z))
-            }
-        }
-    }
-
-    /// By how much the rounding of a value moves the redshift that a table finds.
-    fn spread_in_table(&self, value: f64, epoch: &Epoch) -> f64 {
-        let Inverse::Table { scale, curve } = self.inverse else {
-            return f64::NAN;
-        };
-        let time = matches!(curve, Curve::Age | Curve::Lookback);
-        let stretch = if time { 1.0 + epoch.redshift } else { 1.0 };
-        f64::EPSILON * (value / scale(&self.frame)).abs() * stretch * epoch.rate
     }
 }
 

@@ -6,6 +6,7 @@ mod frame;
 mod inverse;
 mod knots;
 mod reach;
+mod rounding;
 mod solved;
 pub mod unit;
 
@@ -14,6 +15,7 @@ pub use definition::{
     Block, Condition, Forward, HubbleScaling, Inverse, Quantity, Solved, Tolerance,
 };
 pub use frame::Frame;
-pub use inverse::{ILL_CONDITIONED, Inverter, Solution};
+pub use inverse::{Inverter, Solution};
 pub use reach::Miss;
+pub use rounding::ILL_CONDITIONED;
 pub use unit::{Scale, Unit, UnitFault, column_name};

@@ -5,9 +5,8 @@
 //! depend on its neighbours. Where that has not settled, next to a turning point,
 //! its bracket is closed by itself.
 
-use super::inverse::ILL_CONDITIONED;
 use super::knots::{Knot, Monotone};
-use super::{Frame, Quantity, Solved};
+use super::{Frame, ILL_CONDITIONED, Quantity, Solved};
 use crate::expansion::{Epoch, Epochs};
 use crate::numerics::bracketed_root;
 
