@@ -1,6 +1,8 @@
 //! The one layer of our own around every route: size of the head, identity, faults, timing.
 
+use super::cached::push_hexadecimal;
 use super::refusal::{Refusal, explained};
+use super::timing::Timing;
 use crate::wire::{Code, Fault};
 use axum::extract::Request;
 use axum::http::{HeaderMap, HeaderName, HeaderValue};
@@ -11,7 +13,6 @@ use std::hash::{BuildHasher, RandomState};
 use std::panic::AssertUnwindSafe;
 use std::sync::LazyLock;
 use std::sync::atomic::{AtomicU64, Ordering};
-use std::time::Instant;
 
 /// The longest path and query in bytes.
 pub const URI_BYTES: usize = 8192;
@@ -20,7 +21,7 @@ pub const HEADER_BYTES: usize = 16 * 1024;
 
 /// Answers `request` by the routes inside; whatever happens there, the answer is well formed.
 pub(super) async fn around(request: Request, next: Next) -> Response {
-    let start = Instant::now();
+    let timing = Timing::start();
     let id = request_id(request.headers());
     let trace = request
         .headers()
@@ -38,12 +39,12 @@ pub(super) async fn around(request: Request, next: Next) -> Response {
             }
         },
     };
-    finished(answer, start, id, trace)
+    finished(answer, timing, id, trace)
 }
 
 fn finished(
     mut response: Response,
-    start: Instant,
+    mut timing: Timing,
     id: HeaderValue,
     trace: Option<HeaderValue>,
 ) -> Response {
@@ -52,16 +53,9 @@ fn finished(
     if let Some(trace) = trace {
         headers.insert(TRACEPARENT, trace);
     }
-    let total = super::timing::entry("total", start.elapsed());
-    let parts = match headers
-        .get(SERVER_TIMING)
-        .and_then(|parts| parts.to_str().ok())
-    {
-        Some(parts) => format!("{parts}, {total}"),
-        None => total,
-    };
-    if let Ok(timing) = HeaderValue::from_str(&parts) {
-        headers.insert(SERVER_TIMING, timing);
+    if !headers.contains_key(SERVER_TIMING) {
+        timing.end("total");
+        timing.tell(headers);
     }
     response
 }

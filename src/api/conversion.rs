@@ -4,7 +4,7 @@ use super::State;
 use super::accept::{CSV, Format, JSON, TEXT};
 use super::model::{Chosen, overloaded};
 use super::refusal::Refusal;
-use super::respond::chunked;
+use super::respond::{WHOLE_BYTES, chunked, whole};
 use super::timing::Timing;
 use crate::expansion::History;
 use crate::jobs::{Converted, PrintedEpochs, convert};
@@ -68,7 +68,7 @@ pub(super) async fn answer(
     };
     timing.end("compute");
     let mut response = respond(model, given, converted, format);
-    timing.tell(&mut response);
+    timing.tell(response.headers_mut());
     Ok(response)
 }
 
@@ -93,7 +93,11 @@ fn respond(
 ) -> Response {
     if format == &JSON {
         let written = written(&model.echo(), &given, converted);
-        return chunked(format, written.estimate(), written.chunks());
+        let estimate = written.estimate();
+        if estimate <= WHOLE_BYTES {
+            return whole(format, written.whole());
+        }
+        return chunked(format, estimate, written.chunks());
     }
     let table = Table::of(given, converted);
     let estimate = table.estimate();

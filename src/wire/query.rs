@@ -3,21 +3,22 @@
 use super::code::Code;
 use super::fault::Fault;
 use super::nearest::nearest;
+use std::borrow::Cow;
 
 /// The parameters of a query in the order they were written.
 #[derive(Clone, Debug, Default, PartialEq, Eq)]
-pub struct Query {
-    pairs: Vec<(String, String)>,
+pub struct Query<'q> {
+    pairs: Vec<(Cow<'q, str>, Cow<'q, str>)>,
 }
 
-impl Query {
+impl<'q> Query<'q> {
     /// Reads a query string; `+` stands for itself, as in `1e+3`.
     ///
     /// # Errors
     /// `malformed_query` for a bad percent escape or a key without a value, `duplicate_field` for
     /// a repeated key.
-    pub fn read(text: Option<&str>) -> Result<Query, Fault> {
-        let mut pairs: Vec<(String, String)> = Vec::new();
+    pub fn read(text: Option<&'q str>) -> Result<Query<'q>, Fault> {
+        let mut pairs: Vec<(Cow<'q, str>, Cow<'q, str>)> = Vec::with_capacity(8);
         let parts = text
             .unwrap_or("")
             .split('&')
@@ -38,16 +39,18 @@ impl Query {
     }
 
     /// Takes the parameter of this name out.
-    pub fn take(&mut self, name: &str) -> Option<String> {
+    pub fn take(&mut self, name: &str) -> Option<Cow<'q, str>> {
         let index = self.pairs.iter().position(|(key, _)| key == name)?;
         Some(self.pairs.remove(index).1)
     }
 
-    /// Takes out all parameters whose name passes.
-    pub fn take_all(&mut self, wanted: impl Fn(&str) -> bool) -> Vec<(String, String)> {
-        let (taken, kept) = self.pairs.drain(..).partition(|(key, _)| wanted(key));
-        self.pairs = kept;
-        taken
+    /// Takes out the first parameter whose name passes.
+    pub fn take_any(
+        &mut self,
+        wanted: impl Fn(&str) -> bool,
+    ) -> Option<(Cow<'q, str>, Cow<'q, str>)> {
+        let index = self.pairs.iter().position(|(key, _)| wanted(key))?;
+        Some(self.pairs.remove(index))
     }
 
     /// Refuses whatever was not taken.
@@ -72,12 +75,14 @@ impl Query {
     pub fn canonical(&self) -> String {
         let mut pairs: Vec<_> = self.pairs.iter().collect();
         pairs.sort();
-        let mut text = String::new();
-        for (key, value) in pairs {
-            for part in [key, value] {
-                text.push_str(part);
-                text.push('\0');
-            }
+        let length = pairs
+            .iter()
+            .map(|(key, value)| key.len() + value.len() + 2)
+            .sum();
+        let mut text = String::with_capacity(length);
+        for part in pairs.into_iter().flat_map(|(key, value)| [key, value]) {
+            text.push_str(part);
+            text.push('\0');
         }
         text
     }
@@ -129,9 +134,9 @@ pub(super) fn cut(text: &str) -> &str {
         .map_or(text, |(end, _)| text.get(..end).unwrap_or(text))
 }
 
-fn decoded(text: &str) -> Result<String, Fault> {
+fn decoded(text: &str) -> Result<Cow<'_, str>, Fault> {
     if !text.contains('%') {
-        return Ok(text.to_owned());
+        return Ok(Cow::Borrowed(text));
     }
     let refused = || Fault::new(Code::MalformedQuery, "a percent escape is not valid").value(text);
     let mut bytes = Vec::with_capacity(text.len());
@@ -154,7 +159,9 @@ fn decoded(text: &str) -> Result<String, Fault> {
             *byte
         });
     }
-    String::from_utf8(bytes).map_err(|_| refused())
+    String::from_utf8(bytes)
+        .map(Cow::Owned)
+        .map_err(|_| refused())
 }
 
 #[cfg(test)]

@@ -1,14 +1,23 @@
 //! Answers on their way out: pieces of text and columns of numbers, written chunk by chunk.
 
-use super::numbers::{WRITTEN_BYTES, write};
+use super::numbers::{WRITTEN_BYTES, write, write_list};
 use serde::Serialize;
 
 /// An answer whose numbers are written only when they are sent.
-#[derive(Debug, Default)]
+#[derive(Debug)]
 pub struct Written {
     pieces: Vec<Piece>,
     text: Vec<u8>,
-    numbers: usize,
+}
+
+impl Default for Written {
+    fn default() -> Written {
+        Written {
+            pieces: Vec::new(),
+            // Most answers are small and fit.
+            text: Vec::with_capacity(2048),
+        }
+    }
 }
 
 #[derive(Debug)]
@@ -35,9 +44,12 @@ impl Written {
         self.text.pop();
     }
 
-    /// Appends numbers with commas between them.
+    /// Appends numbers with commas between them; a few of them are written at once.
     pub fn numbers(&mut self, numbers: Vec<f64>) {
-        self.numbers += numbers.len();
+        if numbers.len() <= FEW {
+            write_list(&mut self.text, &numbers);
+            return;
+        }
         self.pieces
             .push(Piece::Text(std::mem::take(&mut self.text)));
         self.pieces.push(Piece::Numbers(numbers));
@@ -65,17 +77,23 @@ impl Written {
 
     /// All bytes at once.
     pub fn whole(self) -> Vec<u8> {
+        if self.pieces.is_empty() {
+            return self.text;
+        }
         let mut out = Vec::with_capacity(self.estimate());
         for piece in self.pieces {
             match piece {
                 Piece::Text(text) => out.extend_from_slice(&text),
-                Piece::Numbers(numbers) => super::numbers::write_list(&mut out, &numbers),
+                Piece::Numbers(numbers) => write_list(&mut out, &numbers),
             }
         }
         out.extend_from_slice(&self.text);
         out
     }
 }
+
+/// So few numbers are not worth a piece of their own.
+const FEW: usize = 64;
 
 /// How much is written at once: it stays in the cache of a core.
 pub const CHUNK_BYTES: usize = 64 * 1024;

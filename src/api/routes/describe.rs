@@ -50,6 +50,6 @@ pub(crate) async fn describe(
     timing.end("compute");
     let answer = DescribeAnswer::of(model.echo(), described);
     let mut response = whole(format, serde_json::to_vec(&answer).unwrap_or_default());
-    timing.tell(&mut response);
+    timing.tell(response.headers_mut());
     Ok(response)
 }

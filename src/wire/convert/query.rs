@@ -8,6 +8,7 @@ use super::super::numbers::Numbers;
 use super::super::query::{Query, boolean, cut, number};
 use super::request::{Branch, ConvertRequest, From, OutputRequest};
 use crate::quantity::{QUANTITIES, Quantity};
+use std::borrow::Cow;
 
 /// How many values a query may have.
 pub const MOST_VALUES: usize = 1000;
@@ -17,18 +18,19 @@ impl ConvertRequest {
     ///
     /// # Errors
     /// What the query itself can be wrong about; the rest shows when it is resolved.
-    pub fn of_query(mut query: Query) -> Result<ConvertRequest, Fault> {
+    pub fn of_query(mut query: Query<'_>) -> Result<ConvertRequest, Fault> {
         let model = Model::of_query(&mut query)?;
-        let unit = query.take("unit");
+        let unit = query.take("unit").map(Cow::into_owned);
         let branch = query.take("branch").map(|word| branch(&word)).transpose()?;
         let to = query.take("to").map(|list| outputs(&list)).transpose()?;
         let future = query
             .take("future")
             .map(|word| boolean("future", &word))
             .transpose()?;
-        let mut given = query.take_all(|key| invertible().any(|quantity| quantity.name == key));
+        let invertible = |key: &str| invertible().any(|quantity| quantity.name == key);
+        let (given, second) = (query.take_any(invertible), query.take_any(invertible));
         query.finish(known())?;
-        let (quantity, list) = match (given.pop(), given.pop()) {
+        let (quantity, list) = match (given, second) {
             (Some(given), None) => given,
             (None, _) => {
                 let detail = "no quantity is given, as in redshift=0.5";
@@ -36,14 +38,14 @@ impl ConvertRequest {
             }
             (Some((one, _)), Some((other, _))) => {
                 let detail = format!(
-                    "\"{other}\" and \"{one}\" are given; convert from one quantity at a time"
+                    "\"{one}\" and \"{other}\" are given; convert from one quantity at a time"
                 );
-                return Err(Fault::new(Code::MalformedQuery, detail).parameter(one));
+                return Err(Fault::new(Code::MalformedQuery, detail).parameter(other));
             }
         };
         let values = Numbers(values(&quantity, &list)?);
         let from = From {
-            quantity,
+            quantity: quantity.into_owned(),
             values,
             unit,
             per_h: None,

@@ -107,16 +107,17 @@ impl Model {
     ///
     /// # Errors
     /// `wrong_type` for what is no number, `missing_field`, `malformed_query` for both at once.
-    pub fn of_query(query: &mut Query) -> Result<Option<Model>, Fault> {
+    pub fn of_query(query: &mut Query<'_>) -> Result<Option<Model>, Fault> {
         let name = query.take("model");
-        let members = query.take_all(|key| MEMBERS.iter().any(|member| member == key));
+        let is_member = |key: &str| MEMBERS.iter().any(|member| member == key);
+        let members: Vec<_> = std::iter::from_fn(|| query.take_any(is_member)).collect();
         match (name, members.first()) {
             (None, None) => Ok(None),
-            (Some(name), None) => Ok(Some(Model(NameOr::Name(name)))),
+            (Some(name), None) => Ok(Some(Model(NameOr::Name(name.into_owned())))),
             (Some(_), Some((member, _))) => {
                 let detail =
                     format!("\"model\" names a model and \"{member}\" declares one; give either");
-                Err(Fault::new(Code::MalformedQuery, detail).parameter(member.as_str()))
+                Err(Fault::new(Code::MalformedQuery, detail).parameter(member.as_ref()))
             }
             (None, Some(_)) => {
                 let declared = json::shape(tree(&members)?).map_err(|fault| dotted(&fault))?;
@@ -127,11 +128,11 @@ impl Model {
 }
 
 /// The members of a query as the object they stand for.
-fn tree(members: &[(String, String)]) -> Result<Node<'_>, Fault> {
-    let mut root: Vec<(Cow<'_, str>, Node<'_>)> = Vec::new();
+fn tree<'m>(members: &'m [(Cow<'_, str>, Cow<'_, str>)]) -> Result<Node<'m>, Fault> {
+    let mut root: Vec<(Cow<'m, str>, Node<'m>)> = Vec::new();
     for (key, text) in members {
         let (parent, member) = match key.split_once('.') {
-            None => ("", key.as_str()),
+            None => ("", key.as_ref()),
             Some(split) => split,
         };
         let value = match member {
