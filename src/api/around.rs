@@ -1,10 +1,12 @@
 //! The one layer of our own around every route: size of the head, identity, faults, timing.
 
 use super::cached::push_hexadecimal;
+use super::pack::packed;
 use super::refusal::{Refusal, explained};
 use super::timing::Timing;
 use crate::wire::{Code, Fault};
 use axum::extract::Request;
+use axum::http::header::ACCEPT_ENCODING;
 use axum::http::{HeaderMap, HeaderName, HeaderValue};
 use axum::middleware::Next;
 use axum::response::{IntoResponse, Response};
@@ -28,10 +30,11 @@ pub(super) async fn around(request: Request, next: Next) -> Response {
         .get(TRACEPARENT)
         .filter(|value| is_traceparent(value.as_bytes()))
         .cloned();
+    let accepted = request.headers().get(ACCEPT_ENCODING).cloned();
     let answer = match head_fault(&request) {
         Some(fault) => Refusal::from(fault).into_response(),
         None => match AssertUnwindSafe(next.run(request)).catch_unwind().await {
-            Ok(response) => explained(response),
+            Ok(response) => explained(packed(response, accepted).await),
             Err(_) => {
                 tracing::error!(request_id = ?id, "a request met a panic");
                 let detail = "the service met a fault of its own; it was recorded";
@@ -99,8 +102,9 @@ fn request_id(headers: &HeaderMap) -> HeaderValue {
         .cloned()
         .unwrap_or_else(|| {
             let number = SEED.hash_one(NEXT.fetch_add(1, Ordering::Relaxed));
-            HeaderValue::from_str(&format!("{number:016x}"))
-                .unwrap_or(HeaderValue::from_static("-"))
+            let mut id = String::with_capacity(16);
+            push_hexadecimal(&mut id, number);
+            HeaderValue::try_from(id).unwrap_or(HeaderValue::from_static("-"))
         })
 }
 

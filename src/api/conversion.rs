@@ -67,7 +67,7 @@ pub(super) async fn answer(
         job.await.map_err(overloaded)??
     };
     timing.end("compute");
-    let mut response = respond(model, given, converted, format);
+    let mut response = respond(state, model, given, converted, format);
     timing.tell(response.headers_mut());
     Ok(response)
 }
@@ -86,13 +86,14 @@ fn run(
 }
 
 fn respond(
+    state: &State,
     model: &Chosen<'_>,
     given: Given,
     converted: Converted,
     format: &'static Format,
 ) -> Response {
     if format == &JSON {
-        let written = written(&model.echo(), &given, converted);
+        let written = written(&model.written(state), &given, converted);
         let estimate = written.estimate();
         if estimate <= WHOLE_BYTES {
             return whole(format, written.whole());

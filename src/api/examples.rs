@@ -73,5 +73,6 @@ fn answer_to(body: &str) -> Option<Value> {
         fingerprint: &fingerprint,
         spec: SpecEcho(history.spec()),
     };
+    let echo = serde_json::to_string(&echo).ok()?;
     serde_json::from_slice(&written(&echo, &asked.from, converted).whole()).ok()
 }

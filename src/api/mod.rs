@@ -8,6 +8,7 @@ mod conversion;
 mod document;
 mod examples;
 mod model;
+mod pack;
 mod refusal;
 mod respond;
 mod routes;
@@ -17,18 +18,14 @@ mod unpack;
 
 pub use around::{HEADER_BYTES, URI_BYTES};
 pub use document::{document, written};
+pub use model::Echoes;
 pub use refusal::Refusal;
 pub use respond::{WHOLE_BYTES, chunked};
 pub use state::{Limits, State};
 
 use axum::Router;
-use axum::http::header::CONTENT_TYPE;
-use axum::http::{Extensions, HeaderMap, StatusCode, Version};
 use axum::middleware::from_fn;
 use std::sync::Arc;
-use tower_http::CompressionLevel;
-use tower_http::compression::CompressionLayer;
-use tower_http::compression::predicate::{Predicate, SizeAbove};
 use utoipa_swagger_ui::{Config, SwaggerUi};
 
 /// The whole service; a test may call it without a socket.
@@ -39,19 +36,7 @@ pub fn app(state: Arc<State>) -> Router {
 
 /// Puts around a router what stands around the service.
 pub fn surrounded(router: Router) -> Router {
-    let packed = CompressionLayer::new()
-        .quality(CompressionLevel::Fastest)
-        .compress_when(SizeAbove::new(PACKED_FROM_BYTES).and(is_json));
-    router.layer(packed).layer(from_fn(around::around))
-}
-
-/// Smaller answers would cost more to pack than to send.
-const PACKED_FROM_BYTES: u64 = 10_000;
-
-fn is_json(_: StatusCode, _: Version, headers: &HeaderMap, _: &Extensions) -> bool {
-    headers
-        .get(CONTENT_TYPE)
-        .is_some_and(|kind| kind == accept::JSON.content_type)
+    router.layer(from_fn(around::around))
 }
 
 /// The interactive documentation; its files are part of the program.

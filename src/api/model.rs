@@ -4,10 +4,11 @@ use super::State;
 use crate::expansion::{History, HistoryFault};
 use crate::jobs::PrintedEpochs;
 use crate::model::Spec;
-use crate::prepared::{Entry, Overloaded, Provenance, Unprepared};
+use crate::prepared::{Entry, ModelBook, Overloaded, Provenance, Unprepared};
 use crate::wire::model::{Model, ModelEcho, ModelEntry, SpecEcho, model_faults};
 use crate::wire::{Code, Fault, NameOr, nearest};
 use std::borrow::Cow;
+use std::collections::HashMap;
 use std::sync::Arc;
 
 /// A checked model with what an answer says of it.
@@ -99,6 +100,14 @@ impl<'a> Chosen<'a> {
         }
     }
 
+    /// The same, written.
+    pub(crate) fn written(&self, state: &'a State) -> Cow<'a, str> {
+        let kept = self
+            .name
+            .and_then(|name| state.echoes.get(name, self.defaulted));
+        kept.map_or_else(|| text(&self.echo()).into(), Cow::Borrowed)
+    }
+
     /// Its name and its fingerprint, as far as it has them.
     pub(super) fn label(&self) -> String {
         match self.name {
@@ -106,6 +115,43 @@ impl<'a> Chosen<'a> {
             None => format!("declared model ({})", self.fingerprint),
         }
     }
+}
+
+/// What answers say of the named models, written once.
+#[derive(Clone, Debug, Default)]
+pub struct Echoes {
+    /// By name; first where the request names the model, then where it is the default.
+    written: HashMap<String, [String; 2]>,
+}
+
+impl Echoes {
+    /// Of all models of a book.
+    pub fn of(models: &ModelBook) -> Echoes {
+        let echo = |entry| {
+            let named = Chosen::named(entry);
+            let defaulted = Chosen {
+                defaulted: true,
+                ..Chosen::named(entry)
+            };
+            [text(&named.echo()), text(&defaulted.echo())]
+        };
+        Echoes {
+            written: models
+                .iter()
+                .map(|entry| (entry.name.clone(), echo(entry)))
+                .collect(),
+        }
+    }
+
+    fn get(&self, name: &str, defaulted: bool) -> Option<&str> {
+        let [named, default] = self.written.get(name)?;
+        Some(if defaulted { default } else { named })
+    }
+}
+
+/// Small and without maps of other keys than strings: it can be written.
+fn text(echo: &ModelEcho<'_>) -> String {
+    serde_json::to_string(echo).unwrap_or_default()
 }
 
 /// How well the numbers of a named model were checked against their source.

@@ -1,5 +1,6 @@
 //! What all requests share.
 
+use super::model::Echoes;
 use crate::prepared::{BookFault, Capacity, ModelBook, Prepared};
 use crate::wire::convert::Size;
 use std::sync::Arc;
@@ -13,6 +14,8 @@ pub struct State {
     pub models: ModelBook,
     /// How much a request may ask for.
     pub limits: Limits,
+    /// What answers say of the named models.
+    pub echoes: Echoes,
     /// False when the service is about to stop.
     pub ready: Arc<AtomicBool>,
 }
@@ -57,9 +60,11 @@ impl State {
     /// # Errors
     /// The faults of a shipped model, which a test excludes.
     pub fn shipped() -> Result<State, BookFault> {
+        let models = ModelBook::shipped()?;
         Ok(State {
             prepared: Prepared::new(Capacity::default()),
-            models: ModelBook::shipped()?,
+            echoes: Echoes::of(&models),
+            models,
             limits: Limits::default(),
             ready: Arc::new(AtomicBool::new(true)),
         })

@@ -5,7 +5,7 @@ use super::life::StopSignals;
 use super::listener::{ListenerLimits, Stopped, listen};
 use super::models_file::{self, ModelsFault};
 use super::telemetry::{start_logging, with_request_log};
-use crate::api::{Limits, State, app};
+use crate::api::{Echoes, Limits, State, app};
 use crate::page::EXAMPLES;
 use crate::prepared::{Capacity, Prepared, Provenance, Unprepared};
 use std::io::Write;
@@ -49,6 +49,7 @@ pub(super) fn run(options: &ServeOptions) -> Result<(), StartFault> {
     let capacity = capacity(options);
     let state = Arc::new(State {
         prepared: Prepared::new(capacity),
+        echoes: Echoes::of(&models),
         models,
         limits: Limits::default(),
         ready: Arc::new(AtomicBool::new(true)),

@@ -32,16 +32,28 @@ impl Written {
         self.text.extend_from_slice(text.as_bytes());
     }
 
+    /// Appends a string as JSON.
+    pub fn string(&mut self, text: &str) {
+        if text
+            .bytes()
+            .any(|byte| matches!(byte, b'"' | b'\\' | 0..0x20))
+        {
+            return self.json(&text);
+        }
+        self.text.push(b'"');
+        self.text(text);
+        self.text.push(b'"');
+    }
+
+    /// Appends one number.
+    pub fn number(&mut self, number: f64) {
+        write(&mut self.text, number);
+    }
+
     /// Appends a small value as JSON.
     pub fn json(&mut self, value: &impl Serialize) {
         // Into memory, without maps that have keys other than strings: it can't fail.
         let _ = serde_json::to_writer(&mut self.text, value);
-    }
-
-    /// Appends the members of a small object without its closing brace, so that more may follow.
-    pub fn open_object(&mut self, object: &impl Serialize) {
-        self.json(object);
-        self.text.pop();
     }
 
     /// Appends numbers with commas between them; a few of them are written at once.

@@ -1,34 +1,40 @@
 //! The answer of a conversion as JSON.
 
-use super::super::model::ModelEcho;
-use super::super::service::{SERVICE, Service};
+use super::super::service::SERVICE;
 use super::super::written::Written;
-use crate::jobs::{Basis, Column, Converted, Remark, StatedAccuracy};
+use crate::jobs::{Basis, BranchRange, Column, Converted, Remark, Remarks, StatedAccuracy};
 use crate::tables::Given;
 use serde::Serialize;
 
-/// Writes the answer; the numbers follow when it is sent.
-pub fn written(model: &ModelEcho<'_>, from: &Given, converted: Converted) -> Written {
+/// Writes the answer under a model that is written already; the numbers follow when it is sent.
+pub fn written(model: &str, from: &Given, converted: Converted) -> Written {
     let names: Vec<&'static str> = converted
         .columns
         .iter()
         .map(|column| column.quantity.name)
         .collect();
     let mut out = Written::default();
-    let branches = converted.branches.iter().map(|range| Branch {
-        branch: range.branch,
-        redshift: [range.redshift.0, range.redshift.1],
-    });
-    out.open_object(&Head {
-        model,
-        service: SERVICE,
-        from: FromEcho {
-            quantity: from.quantity.name,
-            unit: from.unit.text(),
-            per_h: from.per_h.then_some(true),
-        },
-        branches: branches.collect(),
-    });
+    out.text("{\"model\":");
+    out.text(model);
+    out.text(",\"service\":{\"name\":\"");
+    out.text(SERVICE.name);
+    out.text("\",\"version\":\"");
+    out.text(SERVICE.version);
+    out.text("\"},\"from\":{\"quantity\":\"");
+    out.text(from.quantity.name);
+    out.text("\",\"unit\":");
+    out.string(from.unit.text());
+    out.text(if from.per_h { ",\"per_h\":true}" } else { "}" });
+    if !converted.branches.is_empty() {
+        out.text(",\"branches\":");
+        out.json(
+            &converted
+                .branches
+                .iter()
+                .map(Branch::of)
+                .collect::<Vec<_>>(),
+        );
+    }
     out.text(",\"columns\":{");
     for (number, column) in converted.columns.into_iter().enumerate() {
         out.text(if number == 0 { "\"" } else { ",\"" });
@@ -37,65 +43,66 @@ pub fn written(model: &ModelEcho<'_>, from: &Given, converted: Converted) -> Wri
         write_column(&mut out, column);
     }
     out.text("},\"remarks\":");
-    let remarks = converted
-        .remarks
-        .first
-        .iter()
-        .map(|remark| RemarkWritten::of(remark, &names));
-    out.json(&remarks.collect::<Vec<_>>());
-    out.text(",\"remark_counts\":");
-    let counts = converted
-        .remarks
-        .counts
-        .iter()
-        .map(|(code, rows)| RemarkCount {
-            code: code.name(),
-            rows: *rows,
-        });
-    out.json(&counts.collect::<Vec<_>>());
+    write_remarks(&mut out, &converted.remarks, &names);
     out.text("}\n");
     out
 }
 
+fn write_remarks(out: &mut Written, remarks: &Remarks, names: &[&'static str]) {
+    if remarks.counts.is_empty() {
+        return out.text("[],\"remark_counts\":[]");
+    }
+    let listed = remarks.first.iter();
+    let listed = listed.map(|remark| RemarkWritten::of(remark, names));
+    out.json(&listed.collect::<Vec<_>>());
+    out.text(",\"remark_counts\":");
+    let counts = remarks.counts.iter().map(|(code, rows)| RemarkCount {
+        code: code.name(),
+        rows: *rows,
+    });
+    out.json(&counts.collect::<Vec<_>>());
+}
+
 /// A column: what it is first, then its numbers.
 fn write_column(out: &mut Written, column: Column) {
-    out.open_object(&ColumnHead {
-        unit: column.unit.text(),
-        per_h: column.per_h.then_some(true),
-        per_sound_horizon: column.per_sound_horizon,
-        accuracy: Accuracy::of(column.accuracy),
-    });
-    out.text(",\"values\":[");
+    out.text("{\"unit\":");
+    out.string(column.unit.text());
+    out.text(if column.per_h { ",\"per_h\":true" } else { "" });
+    if let Some(length) = column.per_sound_horizon {
+        out.text(",\"per_sound_horizon\":");
+        out.number(length);
+    }
+    let accuracy = Accuracy::of(column.accuracy);
+    out.text(",\"accuracy\":{");
+    for (name, figure) in [
+        ("\"relative\":", accuracy.relative),
+        ("\"absolute\":", accuracy.absolute),
+    ] {
+        if let Some(figure) = figure {
+            out.text(name);
+            out.number(figure);
+            out.text(",");
+        }
+    }
+    out.text("\"basis\":\"");
+    out.text(accuracy.basis);
+    out.text("\"},\"values\":[");
     out.numbers(column.values);
     out.text("]");
-    if !column.branches.is_empty() {
-        out.text(",\"branches\":[");
-        for (number, branch) in column.branches.into_iter().enumerate() {
-            out.text(if number == 0 { "" } else { "," });
-            out.text(&format!("{{\"branch\":{},\"values\":[", branch.branch));
-            out.numbers(branch.values);
-            out.text("]}");
+    let branches = column.branches.len();
+    for (number, branch) in column.branches.into_iter().enumerate() {
+        out.text(if number == 0 {
+            ",\"branches\":[{"
+        } else {
+            "]},{"
+        });
+        out.text(&format!("\"branch\":{},\"values\":[", branch.branch));
+        out.numbers(branch.values);
+        if number + 1 == branches {
+            out.text("]}]");
         }
-        out.text("]");
     }
     out.text("}");
-}
-
-#[derive(Serialize)]
-struct Head<'a> {
-    model: &'a ModelEcho<'a>,
-    service: Service,
-    from: FromEcho<'a>,
-    #[serde(skip_serializing_if = "Vec::is_empty")]
-    branches: Vec<Branch>,
-}
-
-#[derive(Serialize)]
-struct FromEcho<'a> {
-    quantity: &'static str,
-    unit: &'a str,
-    #[serde(skip_serializing_if = "Option::is_none")]
-    per_h: Option<bool>,
 }
 
 #[derive(Serialize)]
@@ -104,14 +111,13 @@ struct Branch {
     redshift: [f64; 2],
 }
 
-#[derive(Serialize)]
-struct ColumnHead<'a> {
-    unit: &'a str,
-    #[serde(skip_serializing_if = "Option::is_none")]
-    per_h: Option<bool>,
-    #[serde(skip_serializing_if = "Option::is_none")]
-    per_sound_horizon: Option<f64>,
-    accuracy: Accuracy,
+impl Branch {
+    fn of(range: &BranchRange) -> Branch {
+        Branch {
+            branch: range.branch,
+            redshift: [range.redshift.0, range.redshift.1],
+        }
+    }
 }
 
 /// The accuracy of a column.

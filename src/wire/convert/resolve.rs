@@ -80,18 +80,21 @@ impl ConvertRequest {
             Some(Branch::All) => jobs::Branch::All,
         };
         let from = given(self.from).map_err(|fault| faults.push(fault));
-        let wanted = self.to.map(|to| {
-            let to = to.into_iter().enumerate().map(|(number, output)| {
-                wanted(output, &format!("/to/{number}")).map_err(|fault| faults.push(fault))
-            });
-            to.collect::<Vec<_>>()
-        });
+        let mut to = None;
+        for (number, output) in self.to.into_iter().flatten().enumerate() {
+            match wanted(output, number) {
+                Ok(output) => to
+                    .get_or_insert_with(|| Vec::with_capacity(outputs))
+                    .push(output),
+                Err(fault) => faults.push(fault),
+            }
+        }
         match from {
             Ok(from) if faults.is_empty() => Ok(Asked {
                 model: self.model,
                 from,
                 branch,
-                to: wanted.map(|to| to.into_iter().flatten().collect()),
+                to,
                 future: self.future.unwrap_or(false),
             }),
             _ => Err(faults),
@@ -139,19 +142,15 @@ impl Asked {
             branch: self.branch,
         };
         let to = match &self.to {
-            Some(to) => {
-                let outputs = to.iter().enumerate();
-                outputs
-                    .map(|(number, wanted)| wanted.output(number, history, printed))
-                    .collect::<Result<_, _>>()?
-            }
+            Some(to) => to
+                .iter()
+                .enumerate()
+                .map(|(number, wanted)| wanted.output(number, history, printed))
+                .collect::<Result<_, _>>()?,
             None => {
                 let defined = |quantity: &&Quantity| (quantity.undefined)(history.spec()).is_none();
-                let quantities = DEFAULT_OUTPUTS
-                    .iter()
-                    .filter_map(|name| named(name))
-                    .filter(defined);
-                quantities.map(Output::plain).collect()
+                let quantities = DEFAULT_OUTPUTS.iter().filter_map(|name| named(name));
+                quantities.filter(defined).map(Output::plain).collect()
             }
         };
         Ok(Conversion {
@@ -189,7 +188,7 @@ impl Wanted {
 }
 
 fn given(from: From) -> Result<Given, Fault> {
-    let quantity = known(&from.quantity, "/from/quantity")?;
+    let quantity = known(&from.quantity, || "/from/quantity".to_owned())?;
     if quantity.inverse.is_none() {
         let detail = format!(
             "\"{}\" can't be converted from: a redshift does not follow from it",
@@ -203,15 +202,15 @@ fn given(from: From) -> Result<Given, Fault> {
     Ok(Given {
         quantity,
         values: from.values.0,
-        unit: unit(quantity, from.unit, "/from/unit")?,
+        unit: unit(quantity, from.unit, || "/from/unit".to_owned())?,
         per_h: from.per_h.unwrap_or(false),
     })
 }
 
-fn wanted(output: NameOr<OutputRequest>, pointer: &str) -> Result<Wanted, Fault> {
+fn wanted(output: NameOr<OutputRequest>, number: usize) -> Result<Wanted, Fault> {
     let output = match output {
         NameOr::Name(name) => {
-            let output = Output::plain(known(&name, pointer)?);
+            let output = Output::plain(known(&name, || format!("/to/{number}"))?);
             return Ok(Wanted {
                 output,
                 own_sound_horizon: false,
@@ -219,7 +218,7 @@ fn wanted(output: NameOr<OutputRequest>, pointer: &str) -> Result<Wanted, Fault>
         }
         NameOr::Object(output) => output,
     };
-    let quantity = known(&output.quantity, &format!("{pointer}/quantity"))?;
+    let quantity = known(&output.quantity, || format!("/to/{number}/quantity"))?;
     let (own_sound_horizon, per_sound_horizon) = match output.per_sound_horizon {
         None => (false, None),
         Some(PerSoundHorizon::Own(own)) => (own, None),
@@ -227,7 +226,7 @@ fn wanted(output: NameOr<OutputRequest>, pointer: &str) -> Result<Wanted, Fault>
     };
     let output = Output {
         quantity,
-        unit: unit(quantity, output.unit, &format!("{pointer}/unit"))?,
+        unit: unit(quantity, output.unit, || format!("/to/{number}/unit"))?,
         per_h: output.per_h.unwrap_or(false),
         per_sound_horizon,
     };
@@ -237,7 +236,7 @@ fn wanted(output: NameOr<OutputRequest>, pointer: &str) -> Result<Wanted, Fault>
     })
 }
 
-fn known(name: &str, pointer: &str) -> Result<&'static Quantity, Fault> {
+fn known(name: &str, pointer: impl Fn() -> String) -> Result<&'static Quantity, Fault> {
     named(name).ok_or_else(|| {
         let meant = nearest(name, QUANTITIES.iter().map(|quantity| quantity.name));
         let meant = meant
@@ -245,7 +244,7 @@ fn known(name: &str, pointer: &str) -> Result<&'static Quantity, Fault> {
             .unwrap_or_default();
         let detail = format!("there is no quantity \"{}\"{meant}", cut(name));
         Fault::new(Code::UnknownQuantity, detail)
-            .at(pointer)
+            .at(pointer())
             .value(name)
             .allowed(names(|_| true))
     })
@@ -260,12 +259,16 @@ fn names(wanted: impl Fn(&Quantity) -> bool) -> String {
     names.join(", ")
 }
 
-fn unit(quantity: &Quantity, text: Option<String>, pointer: &str) -> Result<Unit, Fault> {
+fn unit(
+    quantity: &Quantity,
+    text: Option<String>,
+    pointer: impl Fn() -> String,
+) -> Result<Unit, Fault> {
     let Some(text) = text else {
         return Ok(quantity.default_unit());
     };
     let unit = Unit::parse(&text).and_then(|unit| unit.to(&quantity.default_unit()).map(|_| unit));
-    unit.map_err(|fault| unit_fault(&fault).at(pointer).value(text))
+    unit.map_err(|fault| unit_fault(&fault).at(pointer()).value(text))
 }
 
 /// The fault of a unit, without its place.
