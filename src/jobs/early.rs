@@ -1,6 +1,6 @@
 //! Decoupling, the drag epoch, and the sound horizons to them.
 
-use super::describe::{Early, EarlyEpoch, Scalar};
+use super::description::{Early, EarlyEpoch, Scalar};
 use crate::expansion::History;
 use crate::model::{Citation, Printed};
 use crate::numerics::gauss_legendre_16;

@@ -1,6 +1,6 @@
 //! What becomes of the universe: the event horizon and the fate.
 
-use super::describe::{Fate, FateKind, Scalar};
+use super::description::{Fate, FateKind, Scalar};
 use crate::expansion::{Densities, History};
 use crate::numerics::{bracketed_root, gauss_legendre_16};
 

@@ -1,6 +1,6 @@
 //! When one component of the universe overtook another.
 
-use super::describe::{Equality, Milestones, Scalar};
+use super::description::{Equality, Milestones, Scalar};
 use crate::expansion::History;
 use crate::model::neutrinos;
 use crate::numerics::bracketed_root;

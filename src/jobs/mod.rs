@@ -5,6 +5,7 @@ mod code;
 mod conversion;
 mod convert;
 mod describe;
+mod description;
 mod early;
 mod future;
 mod milestones;
@@ -19,9 +20,10 @@ pub use accuracy::{Basis, StatedAccuracy};
 pub use code::Code;
 pub use conversion::{At, Branch, Conversion, ConvertFault, Output, Source};
 pub use convert::{BranchRange, BranchValues, Column, Converted, convert};
-pub use describe::{
+pub use describe::describe;
+pub use description::{
     Budget, Description, Early, EarlyEpoch, Equality, Fate, FateKind, Horizons, Milestones, Past,
-    PastKind, Scalar, Today, describe,
+    PastKind, Scalar, Today,
 };
 pub use early::{PrintedEpochs, sound_horizon_at_drag_mpc};
 pub use remarks::{Detail, Remark, Remarks};

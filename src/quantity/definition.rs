@@ -96,6 +96,9 @@ pub struct Condition {
     pub number: fn(f64, &Epoch, &Frame) -> f64,
 }
 
+/// The relative change by rounding of the input that makes a value ill conditioned.
+pub const ILL_CONDITIONED: f64 = 1e-9;
+
 /// Rows of a history that lie ready to be read.
 #[derive(Clone, Copy, Debug)]
 pub struct Block<'a> {

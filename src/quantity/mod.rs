@@ -12,10 +12,9 @@ pub mod unit;
 
 pub use catalogue::{QUANTITIES, named};
 pub use definition::{
-    Block, Condition, Forward, HubbleScaling, Inverse, Quantity, Solved, Tolerance,
+    Block, Condition, Forward, HubbleScaling, ILL_CONDITIONED, Inverse, Quantity, Solved, Tolerance,
 };
 pub use frame::Frame;
 pub use inverse::{Inverter, Solution};
 pub use reach::Miss;
-pub use rounding::ILL_CONDITIONED;
 pub use unit::{Scale, Unit, UnitFault, column_name};

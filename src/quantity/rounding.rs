@@ -1,10 +1,8 @@
 //! How the rounding of a value moves its redshift.
 
-use super::{Inverse, Inverter, Solved};
+use super::{ILL_CONDITIONED, Inverse, Inverter, Solved};
 use crate::expansion::{Curve, Epoch, Epochs, Wanted};
 
-/// The relative change by rounding of the input that makes a value ill conditioned.
-pub const ILL_CONDITIONED: f64 = 1e-9;
 /// What lies between the edges that are looked at may be worse by this.
 const MARGIN: f64 = 8.0;
 
