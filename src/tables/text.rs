@@ -15,11 +15,11 @@ pub fn chunks(table: Table, footer: String) -> impl Iterator<Item = Vec<u8>> + S
             block(&table, &widths, row, &mut out);
             row += 1;
         }
-        if row == table.rows {
-            if let Some(footer) = footer.take() {
-                // Writing to a String cannot fail.
-                let _ = writeln!(out, "# {footer}");
-            }
+        if row == table.rows
+            && let Some(footer) = footer.take()
+        {
+            // Writing to a String cannot fail.
+            let _ = writeln!(out, "# {footer}");
         }
         (!out.is_empty()).then_some(out.into_bytes())
     })

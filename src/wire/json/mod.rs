@@ -3,6 +3,7 @@
 //! Own code, because a batch of redshifts goes through it: arrays of numbers become a `Vec<f64>`
 //! at once, correctly rounded, and every fault knows its place.
 
+mod elements;
 mod node;
 mod number;
 mod reader;

@@ -3,11 +3,12 @@
 use super::super::code::Code;
 use super::super::fault::Fault;
 use super::super::nearest::nearest;
+use super::elements::{Cell, Elements};
 use super::node::Node;
 use serde::de::value::{BorrowedStrDeserializer, StringDeserializer};
 use serde::de::{
-    DeserializeSeed, Deserializer, Error, Expected, IntoDeserializer, MapAccess, SeqAccess,
-    Unexpected, Visitor,
+    DeserializeSeed, Deserializer, Error, Expected, IntoDeserializer, MapAccess, Unexpected,
+    Visitor,
 };
 use std::borrow::Cow;
 use std::fmt::Display;
@@ -24,7 +25,7 @@ impl<'de> Deserializer<'de> for Node<'de> {
             Node::Text(Cow::Borrowed(text)) => visitor.visit_borrowed_str(text),
             Node::Text(Cow::Owned(text)) => visitor.visit_string(text),
             Node::Numbers(numbers) => {
-                visitor.visit_seq(Elements::of(numbers.into_iter().map(Node::of_number)))
+                visitor.visit_seq(Elements::of(numbers.into_iter().map(Cell)))
             }
             Node::Array(elements) => visitor.visit_seq(Elements::of(elements.into_iter())),
             Node::Object(members) => visitor.visit_map(Members {
@@ -89,40 +90,6 @@ impl Node<'_> {
             Node::Numbers(_) | Node::Array(_) => Unexpected::Seq,
             Node::Object(_) => Unexpected::Map,
         }
-    }
-}
-
-struct Elements<I> {
-    rest: I,
-    index: usize,
-}
-
-impl<I> Elements<I> {
-    fn of(rest: I) -> Elements<I> {
-        Elements { rest, index: 0 }
-    }
-}
-
-impl<'de, I: ExactSizeIterator<Item = Node<'de>>> SeqAccess<'de> for Elements<I> {
-    type Error = Fault;
-
-    #[inline]
-    fn next_element_seed<T: DeserializeSeed<'de>>(
-        &mut self,
-        seed: T,
-    ) -> Result<Option<T::Value>, Fault> {
-        let Some(element) = self.rest.next() else {
-            return Ok(None);
-        };
-        self.index += 1;
-        match seed.deserialize(element) {
-            Ok(value) => Ok(Some(value)),
-            Err(fault) => Err(fault.inside(&(self.index - 1).to_string())),
-        }
-    }
-
-    fn size_hint(&self) -> Option<usize> {
-        Some(self.rest.len())
     }
 }
 
