@@ -234,7 +234,7 @@ fn fill(column: &mut [f64], wanted: bool, rows: &Range<usize>, lane: impl Fn(usi
     }
 }
 
-/// u · Σ powers[k] uᵏ on eight panels.
+/// u · Σ `powers[k]` uᵏ on eight panels.
 #[inline]
 fn integral(powers: [&Powers; 8], u: &[f64; 8]) -> [f64; 8] {
     let mut integral = polynomials(powers, u);

@@ -149,7 +149,7 @@ impl Curve {
     }
 }
 
-/// u · Σ powers[k] uᵏ with its derivative, eight lanes at once.
+/// u · Σ `powers[k]` uᵏ with its derivative, eight lanes at once.
 fn integrals(powers: [&Powers; 8], u: &[f64; 8]) -> ([f64; 8], [f64; 8]) {
     let value = polynomials(powers, u);
     let mut slope = [0.0; 8];

@@ -50,11 +50,11 @@ pub(super) struct Panel {
     pub beside_turning_point: bool,
     /// The integrals at u = 0.
     pub at_centre: Sums,
-    /// ∫ dz/E from the centre to u is u · Σ distance[k] uᵏ.
+    /// ∫ dz/E from the centre to u is u · Σ `distance[k]` uᵏ.
     pub distance: Powers,
     /// ∫ dz/((1+z) E) likewise.
     pub time: Powers,
-    /// E itself, Σ rate[k] uᵏ; beside a turning point E/u.
+    /// E itself, Σ `rate[k]` uᵏ; beside a turning point E/u.
     pub rate: Powers,
 }
 
@@ -157,7 +157,7 @@ impl Panel {
         (redshift - self.centre) * self.scale
     }
 
-    /// What Σ rate[k] uᵏ is to be multiplied with to give E.
+    /// What Σ `rate[k]` uᵏ is to be multiplied with to give E.
     #[inline]
     pub(super) fn rate_factor(&self, u: f64) -> f64 {
         if self.beside_turning_point { u } else { 1.0 }
@@ -171,7 +171,7 @@ impl Panel {
     }
 }
 
-/// Σ powers[k] uᵏ by Horner's rule.
+/// Σ `powers[k]` uᵏ by Horner's rule.
 #[inline]
 pub(super) fn polynomial(powers: &Powers, u: f64) -> f64 {
     powers.iter().rev().fold(0.0, |sum, power| sum * u + power)
