@@ -17,8 +17,13 @@ mod rounds;
 mod server;
 mod singles;
 
+use std::process::Command;
+
 fn main() {
     let arguments: Vec<String> = std::env::args().skip(1).collect();
+    if on_one_processor(&arguments) {
+        return;
+    }
     let wanted = |name: &str| arguments.iter().any(|word| word == name);
     let all = !wanted("tables") && !wanted("requests");
     let rounds = arguments
@@ -34,4 +39,31 @@ fn main() {
         singles::compare(rounds);
         batches::compare(rounds);
     }
+}
+
+/// Runs this program again on one processor, where the system can do that, so that no case pays for
+/// waking another one and a second does not.
+fn on_one_processor(arguments: &[String]) -> bool {
+    const MARK: &str = "RATIOS_ON_ONE_PROCESSOR";
+    if std::env::var_os(MARK).is_some() {
+        return false;
+    }
+    let last = std::thread::available_parallelism()
+        .map_or(0, |count| count.get() - 1)
+        .to_string();
+    let program = std::env::current_exe().expect("a program has a path");
+    let run = Command::new("taskset")
+        .arg("-c")
+        .arg(last)
+        .arg(program)
+        .args(arguments)
+        .env(MARK, "")
+        .status();
+    let done = run.is_ok_and(|status| status.success());
+    if !done {
+        println!(
+            "(not on one processor: `taskset` is missing or was refused; ratios of requests mean less)"
+        );
+    }
+    done
 }
