@@ -3,7 +3,7 @@
 use super::Table;
 use super::digits::shortest;
 
-/// The file in chunks of about [`CHUNK_BYTES`]; its last column is `remark`.
+/// The file in chunks of about 64 KiB; its last column is `remark`.
 pub fn chunks(table: Table) -> impl Iterator<Item = Vec<u8>> + Send + 'static {
     let mut row = 0;
     let mut head = Some(header(&table));
