@@ -21,6 +21,9 @@ impl Declaration {
         let checked = check(self)?;
         let (given_curvature, given_density) = (checked.curvature, checked.density);
         let mut spec = open(checked);
+        if let Some(fault) = radiation_beyond_numbers(&spec) {
+            return Err(vec![fault]);
+        }
         let mut faults = Vec::new();
         faults.extend(parts_exceed_matter(&spec));
         faults.extend(balance(given_curvature, given_density, &mut spec));
@@ -49,6 +52,22 @@ fn open(checked: Checked) -> Spec {
             density: 0.0,
         },
     }
+}
+
+/// Shares of the critical density grow as 1/H0²: a tiny H0 leaves the range of doubles.
+fn radiation_beyond_numbers(spec: &Spec) -> Option<ModelFault> {
+    let radiation = spec.photons() + spec.massless_neutrinos() + spec.massive_neutrino_density();
+    if radiation.is_finite() {
+        return None;
+    }
+    let detail = format!(
+        "hubble_constant is {}, so small that the radiation's share of the critical density is beyond the range of a double",
+        shown(spec.hubble_constant)
+    );
+    Some(
+        ModelFault::new(ModelFaultKind::Impossible, "/hubble_constant", detail)
+            .with_value(spec.hubble_constant),
+    )
 }
 
 /// Matter must hold its parts.

@@ -232,15 +232,26 @@ fn a_closing_term_out_of_range_is_refused() {
         "{}",
         faults[0]
     );
-    // And here they overflow a double.
-    let model = Declaration {
-        radiation: radiation(2.7255, 3.046, &[]),
-        ..plain(1e-200, 0.3)
-    };
-    refused(&model, &[("/dark_energy/density", Impossible)]);
-    let model = Declaration {
-        dark_energy: dark_energy("none", None, &[]),
-        ..model
-    };
-    refused(&model, &[("/curvature", Impossible)]);
+}
+
+#[test]
+fn radiation_beyond_numbers_is_told_of_the_hubble_constant() {
+    // A double overflows with the photons, and what is made of that is no number.
+    for (hubble_constant, masses, form) in [
+        (1e-200, &[][..], "cosmological_constant"),
+        (1e-200, &[], "none"),
+        (5e-324, &[0.06], "cosmological_constant"),
+    ] {
+        let model = Declaration {
+            radiation: radiation(2.7255, 3.046, masses),
+            dark_energy: dark_energy(form, None, &[]),
+            ..plain(hubble_constant, 0.3)
+        };
+        let faults = refused(&model, &[("/hubble_constant", Impossible)]);
+        let detail = &faults[0].detail;
+        assert!(
+            !detail.contains("NaN") && !detail.contains("inf"),
+            "{detail}"
+        );
+    }
 }
