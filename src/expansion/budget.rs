@@ -62,6 +62,25 @@ impl Densities {
         }
     }
 
+    /// The sum whose sign is that of q, Σ (1 + 3 wᵢ) ρᵢ, relative to the sum of
+    /// the sizes of its terms: from −1 to 1, and without the pole that q has at a
+    /// turning point; 0 where every term is.
+    #[must_use]
+    pub fn braking(&self, redshift: f64) -> f64 {
+        let stretch = 1.0 + redshift;
+        let terms = self.terms(stretch);
+        let pressure = self.massive_neutrino_pressure(stretch);
+        let fluids = 2.0 * terms.radiation + terms.cold_matter + terms.massive_neutrinos + pressure;
+        let thrice = 3.0 * self.equation_of_state(stretch);
+        let dark_energy = terms.dark_energy * (1.0 + thrice);
+        let sizes = fluids + terms.dark_energy.abs() * (1.0 + thrice.abs());
+        if sizes > 0.0 {
+            (fluids + dark_energy) / sizes
+        } else {
+            0.0
+        }
+    }
+
     /// 1 + z − E, the redshift drift in units of H0.
     ///
     /// It is formed as (v² − E²)/(v + E), v² being Σ Ωᵢ v², so that near today

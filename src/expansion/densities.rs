@@ -187,7 +187,7 @@ impl Densities {
     }
 
     /// 3 P of the massive neutrinos in units of today's critical density.
-    fn massive_neutrino_pressure(&self, stretch: f64) -> f64 {
+    pub(super) fn massive_neutrino_pressure(&self, stretch: f64) -> f64 {
         let square = stretch * stretch;
         let sum: f64 = self
             .massive

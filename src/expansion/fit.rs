@@ -52,10 +52,17 @@ impl Fit {
         };
         let mut fit = Fit::of(densities, plan, low, high, Shape::Line(origin), origin);
         if origin != Origin::Centre {
-            // E(z = 0) = 1 exactly.
-            fit.distance_slope[0] = high - low;
-            fit.time_slope[0] = high - low;
-            fit.rate[0] = 1.0;
+            // E(z = 0) = 1 exactly. What rounding left there is taken away with a
+            // line that vanishes at the other end, where the slopes may be smaller.
+            let outward = if origin == Origin::LeftEnd { 1.0 } else { -1.0 };
+            for (powers, today) in [
+                (&mut fit.distance_slope, high - low),
+                (&mut fit.time_slope, high - low),
+                (&mut fit.rate, 1.0),
+            ] {
+                powers[1] -= outward * (today - powers[0]);
+                powers[0] = today;
+            }
         }
         fit
     }

@@ -7,10 +7,12 @@ use crate::numerics::bracketed_root;
 
 /// Points sampled on each panel of the history in search of a change of sign.
 const SAMPLES: u32 = 4;
+/// A share of the terms below this has no sign that rounding could not have made.
+const SIGNIFICANT: f64 = 1e-12;
 
 /// The redshifts at which one thing overtook another.
 pub(super) fn milestones(history: &History) -> Milestones {
-    let acceleration = zeros(history, |z| history.densities().composition(z).deceleration);
+    let acceleration = zeros(history, |z| history.densities().braking(z));
     let redshift = |z: f64| Scalar::from(z, "1");
     Milestones {
         equality: equality(history),
@@ -52,7 +54,10 @@ fn equality(history: &History) -> Equality {
             .iter()
             .map(|one| one.massless_density * neutrinos::energy(one.y / v));
         let (pressure, energy): (f64, f64) = (pressures.sum(), energies.sum());
-        (photons + spec.massless_neutrinos() + 2.0 * pressure - energy) * v - cold
+        share(
+            (photons + spec.massless_neutrinos() + 2.0 * pressure) * v,
+            energy * v + cold,
+        )
     });
     Equality {
         all_neutrinos_massless: Scalar::optional(matter, "1", "there is no other matter"),
@@ -67,7 +72,10 @@ fn matter_dark_energy(history: &History) -> Scalar {
     }
     let crossings = zeros(history, |z| {
         let terms = history.densities().terms(1.0 + z);
-        terms.cold_matter + terms.massive_neutrinos - terms.dark_energy
+        share(
+            terms.cold_matter + terms.massive_neutrinos,
+            terms.dark_energy,
+        )
     });
     let distance = |z: &f64| libm::log1p(*z).abs();
     let nearest = crossings
@@ -88,7 +96,18 @@ fn peaks(history: &History) -> Vec<f64> {
     turning.iter().filter(peak).copied().collect()
 }
 
-/// The changes of sign of a function over the range of a history, ascending.
+/// How much larger one term is than another, as a share of both.
+fn share(one: f64, other: f64) -> f64 {
+    let sizes = one.abs() + other.abs();
+    if sizes > 0.0 {
+        (one - other) / sizes
+    } else {
+        0.0
+    }
+}
+
+/// The changes of sign of a share over the range of a history, ascending;
+/// between the samples where it is more than rounding.
 fn zeros(history: &History, function: impl Fn(f64) -> f64) -> Vec<f64> {
     let (lowest, highest) = history.range();
     let mut samples = vec![lowest];
@@ -100,13 +119,12 @@ fn zeros(history: &History, function: impl Fn(f64) -> f64) -> Vec<f64> {
     }
     samples.retain(|z| (lowest..=highest).contains(z));
     samples.push(highest);
+    samples.retain(|z| function(*z).abs() >= SIGNIFICANT);
     samples
         .windows(2)
         .filter_map(|pair| {
             let &[low, high] = pair else { return None };
-            let root = bracketed_root(low, high, &function)?;
-            // A zero on a sample belongs to the pair that begins with it.
-            (root < high).then_some(root)
+            bracketed_root(low, high, &function)
         })
         .collect()
 }

@@ -21,12 +21,13 @@ pub struct Quantity {
     pub ucd: &'static str,
     /// One sentence.
     pub meaning: &'static str,
-    /// The values it takes, in words.
+    /// The values it takes, in words; z ≥ 0 unless they mention the future.
     pub domain: &'static str,
     /// The promise that is tested and served.
     pub tolerance: Tolerance,
     /// What the checked errors of a model's tables make in it: relative, or in
-    /// its unit where the tolerance is absolute; `None` where no table enters.
+    /// its unit where the tolerance is absolute, for a condition of 1; `None` where
+    /// no table enters.
     pub table_error: Option<fn(&Accuracy) -> f64>,
     /// What "per h" does to it.
     pub scaling: HubbleScaling,
@@ -151,6 +152,8 @@ pub struct Solved {
     pub turning: fn(&Turning) -> &[f64],
     /// What it tends to, from below, as z → ∞; infinite where it grows for ever.
     pub horizon: fn(&Frame) -> f64,
+    /// What it tends to as z → −1; infinite where it grows, or where that is no matter.
+    pub late_limit: fn(&Frame) -> f64,
     /// Whether values of z < 0 are solved for.
     pub future: bool,
 }

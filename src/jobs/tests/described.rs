@@ -99,3 +99,70 @@ fn the_end_is_told() {
     let expected = 2.0 * std::f64::consts::PI * history.hubble_time_gyr();
     assert!((life / expected - 1.0).abs() < 1e-10, "{life} {expected}");
 }
+
+fn of(hubble_constant: f64, matter: f64, dark_energy: Option<f64>) -> History {
+    let form = if dark_energy.is_some() {
+        "cosmological_constant"
+    } else {
+        "none"
+    };
+    build(&Declaration {
+        hubble_constant,
+        matter,
+        dark_energy: Some(DarkEnergyDeclaration {
+            form: form.to_owned(),
+            density: dark_energy,
+            parameters: Vec::new(),
+        }),
+        ..Declaration::default()
+    })
+}
+
+#[test]
+fn no_acceleration_is_made_of_rounding_or_a_turning_point() {
+    // None of them changes between the two: q = ½ Ω_m(z) − Ω_Λ(z) keeps its sign.
+    for (hubble_constant, matter, dark_energy) in [
+        (70.0, 0.0, None),
+        (70.0, 1.0, None),
+        (70.0, 3.0, None),
+        (70.0, 0.1, Some(2.0)),
+        (70.0, 0.2, Some(2.0)),
+        (70.0, 0.3, Some(-0.5)),
+        (60.0, 0.2, Some(-0.2)),
+        (70.0, 1.8, Some(0.01)),
+    ] {
+        let history = of(hubble_constant, matter, dark_energy);
+        let found = describe(&history, PrintedEpochs::default())
+            .milestones
+            .acceleration;
+        assert!(
+            found.is_empty(),
+            "matter {matter}, dark energy {dark_energy:?}: {found:?}"
+        );
+    }
+    // 1 + z = (2 Ω_Λ/Ω_m)^(1/3), from q = 0.
+    let history = of(70.0, 0.3, Some(0.7));
+    let found = describe(&history, PrintedEpochs::default())
+        .milestones
+        .acceleration;
+    assert_eq!(found.len(), 1);
+    let expected = libm::cbrt(1.4 / 0.3) - 1.0;
+    assert!((found[0].value.unwrap() - expected).abs() < 1e-14);
+}
+
+#[test]
+fn what_is_stated_is_what_the_catalogue_promises() {
+    let mut histories = vec![with_radiation(), of(70.0, 1.0, None), plain(0.3, 0.1)];
+    for set in crate::model::PUBLISHED_SETS {
+        histories.push(History::build(&set.spec().unwrap()).unwrap());
+    }
+    for history in &histories {
+        for (quantity, stated) in describe(history, PrintedEpochs::default()).accuracy {
+            let crate::quantity::Tolerance::Relative(promised) = quantity.tolerance else {
+                continue;
+            };
+            assert_eq!(stated.relative, Some(promised), "{}", quantity.name);
+        }
+        assert!(history.bytes() <= 64 * 1024, "{}", history.bytes());
+    }
+}

@@ -15,7 +15,8 @@ pub(super) const CRITICAL_DENSITY: Quantity = Quantity {
     meaning: "Mass density at which the universe would be flat.",
     domain: "above 0",
     tolerance: PRODUCT,
-    table_error: Some(|accuracy| 2.0 * accuracy.rate),
+    // For a condition of 1: that of a square is 2.
+    table_error: Some(|accuracy| accuracy.rate),
     scaling: HubbleScaling::None,
     future: true,
     forward: forward!(RATE, |epoch, frame| {
@@ -62,7 +63,7 @@ pub(super) const CURVATURE_FRACTION: Quantity = Quantity {
     name: "curvature_fraction",
     symbol: "Ω_K(z)",
     meaning: "Share of curvature at that redshift: positive when open, negative when closed.",
-    domain: "any number below 1",
+    domain: "any number up to 1",
     forward: forward!(NOTHING, |epoch, frame| at(epoch.redshift, frame).curvature),
     formula: "Ω_K(z) = Ω_K (1+z)²/E²",
     ..MATTER_FRACTION
@@ -82,7 +83,7 @@ pub(super) const DARK_ENERGY_FRACTION: Quantity = Quantity {
 pub(super) const MASSIVE_NEUTRINO_FRACTION: Quantity = Quantity {
     name: "massive_neutrino_fraction",
     symbol: "Ω_ν(z)",
-    meaning: "Share of massive neutrinos at that redshift; contained in the matter fraction, listed so that it can be moved.",
+    meaning: "Share of massive neutrinos in the critical density at that redshift; contained in the matter fraction.",
     domain: "0 to the matter fraction",
     forward: forward!(NOTHING, |epoch, frame| at(epoch.redshift, frame)
         .massive_neutrino),

@@ -11,7 +11,7 @@ pub(super) const ANGULAR_SCALE: Quantity = Quantity {
     unit: "kpc/arcsec",
     ucd: "pos.distance;arith.ratio",
     meaning: "Proper size seen under one second of arc.",
-    domain: "0 to its largest value, then falling again",
+    domain: "0 to its maximum in the model; decreases with redshift beyond it",
     tolerance: PRODUCT,
     table_error: Some(|accuracy| accuracy.comoving),
     scaling: HubbleScaling::Power(1),
@@ -53,7 +53,8 @@ pub(super) const ALCOCK_PACZYNSKI: Quantity = Quantity {
     ucd: "arith.ratio;phys.cosmology",
     meaning: "Ratio of the depth in redshift to the angle of a sphere that expands with the universe.",
     domain: "0 upwards",
-    tolerance: PRODUCT,
+    // Two tables, and nothing of H0 to divide their errors by.
+    tolerance: Tolerance::Relative(4e-15),
     table_error: Some(|accuracy| accuracy.comoving + accuracy.rate),
     scaling: HubbleScaling::None,
     future: false,

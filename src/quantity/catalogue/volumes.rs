@@ -15,7 +15,8 @@ pub(super) const COMOVING_VOLUME: Quantity = Quantity {
     meaning: "Comoving volume out to that redshift, whole sky; counts space again beyond the antipode of a closed model.",
     domain: "0 upwards",
     tolerance: PRODUCT,
-    table_error: Some(|accuracy| 3.0 * accuracy.comoving),
+    // For a condition of 1: that of a cube is 3.
+    table_error: Some(|accuracy| accuracy.comoving),
     scaling: HubbleScaling::Power(3),
     future: false,
     forward: forward!(PRECISE, |epoch, frame| {
@@ -42,7 +43,8 @@ pub(super) const VOLUME_ELEMENT: Quantity = Quantity {
     meaning: "Comoving volume per steradian and unit redshift.",
     domain: "0 upwards",
     tolerance: PRODUCT,
-    table_error: Some(|accuracy| 2.0 * accuracy.comoving + accuracy.rate),
+    // For a condition of 1: that in H0 is 3.
+    table_error: Some(|accuracy| (2.0 * accuracy.comoving + accuracy.rate) / 3.0),
     scaling: HubbleScaling::Power(3),
     future: false,
     forward: forward!(RATE_AND_COMOVING, |epoch, frame| {
@@ -64,7 +66,7 @@ pub(super) const VOLUME_AVERAGED_DISTANCE: Quantity = Quantity {
     meaning: "Mean of two transverse and one radial distance, as acoustic scales average them.",
     domain: "0 upwards",
     tolerance: PRODUCT,
-    table_error: Some(|accuracy| accuracy.comoving + accuracy.rate),
+    table_error: Some(|accuracy| (2.0 * accuracy.comoving + accuracy.rate) / 3.0),
     scaling: HubbleScaling::Power(1),
     future: false,
     forward: forward!(RATE_AND_COMOVING, |epoch, frame| {
@@ -131,6 +133,7 @@ static VOLUME: Solved = Solved {
             )
         })
     },
+    late_limit: |_| f64::INFINITY,
     future: false,
 };
 
