@@ -21,7 +21,7 @@ pub enum Code {
     BeforeBeginning,
     /// The model has no beginning.
     NoBeginning,
-    /// Outside the redshifts that the model's history is told for.
+    /// Outside the redshifts for which the expansion history is tabulated.
     BeyondModelRange,
     /// Where the physics of the model stops being that of the universe.
     BeyondPhysics,
@@ -59,7 +59,7 @@ const ENTRIES: [(Code, &str, &str, bool); 18] = [
     (
         Code::Blueshift,
         "blueshift",
-        "-1 < z < 0; \"future\": true gives times, rates and fractions",
+        "-1 < z < 0, where distances, volumes and scales are not defined; times, rates and fractions are given with \"future\": true",
         false,
     ),
     (
@@ -95,7 +95,7 @@ const ENTRIES: [(Code, &str, &str, bool); 18] = [
     (
         Code::BeyondModelRange,
         "beyond_model_range",
-        "outside the redshifts that the model's history is told for",
+        "outside the redshifts for which the expansion history is tabulated",
         false,
     ),
     (
@@ -108,7 +108,7 @@ const ENTRIES: [(Code, &str, &str, bool); 18] = [
     (
         Code::IllConditioned,
         "ill_conditioned",
-        "rounding of the given value alone moves the result by more than 1e-9 of itself; the value stays",
+        "the rounding of one double, 2**-52 of the given value or of a declared number, may move the result by more than 1e-9 of itself; the value stays",
         true,
     ),
     (

@@ -114,7 +114,7 @@ pub enum ConvertFault {
         quantity: &'static str,
     },
     /// A branch that does not exist.
-    #[error("{quantity} has {branches} in this model, there is no branch {number}")]
+    #[error("{quantity} has {branches} branch{} in this model: there is no branch {number}", if *.branches == 1 { "" } else { "es" })]
     NoSuchBranch {
         /// Its name.
         quantity: &'static str,
@@ -130,7 +130,9 @@ impl<'a> Conversion<'a> {
     pub(super) fn check(&self, frame: &Frame<'a>) -> Result<Inverter<'a>, ConvertFault> {
         let quantity = self.from.quantity;
         defined(self.history, quantity, At::Source)?;
-        let Some(inverter) = Inverter::prepare(frame, quantity, self.future) else {
+        let Some(inverter) =
+            Inverter::prepare_for(frame, quantity, self.future, self.from.values.len())
+        else {
             return Err(ConvertFault::NotInvertible {
                 quantity: quantity.name,
             });

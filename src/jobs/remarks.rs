@@ -23,6 +23,12 @@ pub enum Detail {
     None,
     /// The largest value of a quantity, in a unit of the catalogue.
     Largest(f64, &'static str),
+    /// The smallest value of a quantity, in a unit of the catalogue.
+    Smallest(f64, &'static str),
+    /// What the values of a quantity come near to but never reach, likewise.
+    StaysAbove(f64, &'static str),
+    /// Whatever the request says, the quantity has no value there.
+    NotBelowZero(&'static str),
     /// By how much rounding moves the redshift.
     RedshiftUncertain(f64),
     /// Redshifts between which the history is told.
@@ -45,6 +51,15 @@ impl std::fmt::Display for Detail {
             Detail::None => Ok(()),
             Detail::Largest(value, unit) => {
                 write!(formatter, "the largest value is {value} {unit}")
+            }
+            Detail::Smallest(value, unit) => {
+                write!(formatter, "the smallest value is {value} {unit}")
+            }
+            Detail::StaysAbove(value, unit) => {
+                write!(formatter, "all values are above {value} {unit}")
+            }
+            Detail::NotBelowZero(quantity) => {
+                write!(formatter, "{quantity} is not defined for z < 0")
             }
             Detail::RedshiftUncertain(spread) => {
                 write!(formatter, "dz = {spread:.1e} from rounding alone")

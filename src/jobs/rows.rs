@@ -165,16 +165,18 @@ impl<'a, 'b> Rows<'a, 'b> {
     /// Empties the cells that have no value, and says why where the row does not.
     fn leave_out(&mut self, number: usize, quantity: &Quantity, cells: &mut [f64], place: Place) {
         for (row, cell) in cells.iter_mut().enumerate() {
-            let code = match self.standings.get(row).copied().unwrap_or_default() {
+            let said = match self.standings.get(row).copied().unwrap_or_default() {
                 Standing::Null => None,
-                Standing::Ahead if !quantity.future => Some(Code::Blueshift),
+                Standing::Ahead if !quantity.future => {
+                    Some((Code::Blueshift, Detail::NotBelowZero(quantity.name)))
+                }
                 _ if cell.is_finite() => continue,
-                _ => Some(self.code_of_infinity(quantity)),
+                _ => Some((self.code_of_infinity(quantity), Detail::None)),
             };
             *cell = f64::NAN;
-            if let Some(code) = code {
+            if let Some((code, detail)) = said {
                 self.remarks
-                    .push(remark(place, row, Some(number), code, Detail::None));
+                    .push(remark(place, row, Some(number), code, detail));
             }
         }
     }
@@ -214,7 +216,16 @@ impl<'a, 'b> Rows<'a, 'b> {
                     Tolerance::Absolute(_) => MAGNITUDES,
                     _ => 0.5 * (one + other).abs(),
                 };
-                if 0.5 * (other - one).abs() > ILL_CONDITIONED * size {
+                // Of a value that is exactly zero nothing is a small share: its
+                // redshift counts instead.
+                let moved = if one * other <= 0.0
+                    && at(&self.frame.history.epoch(*z), &self.frame) == 0.0
+                {
+                    spread > ILL_CONDITIONED * (1.0 + z)
+                } else {
+                    0.5 * (other - one).abs() > ILL_CONDITIONED * size
+                };
+                if moved {
                     let detail = Detail::RedshiftUncertain(spread);
                     self.remarks.push(remark(
                         place,

@@ -95,6 +95,15 @@ impl<'a, 'b> Verdict<'a, 'b> {
                 Detail::Largest(largest, self.inverter.quantity().unit),
             ),
             Miss::BeyondMaximum(_) => (Code::BeyondMaximum, Detail::None),
+            Miss::BelowMinimum(lowest, taken) => {
+                let unit = self.inverter.quantity().unit;
+                let detail = if taken {
+                    Detail::Smallest(lowest, unit)
+                } else {
+                    Detail::StaysAbove(lowest, unit)
+                };
+                (Code::OutsideDomain, detail)
+            }
             Miss::BeforeBeginning => (Code::BeforeBeginning, Detail::None),
             Miss::NoBeginning => (Code::NoBeginning, Detail::None),
             Miss::Divergent => (Code::Divergent, Detail::None),

@@ -18,6 +18,9 @@ pub struct Inverter<'a> {
     settled: (f64, f64),
 }
 
+/// So many values are worth a look at the whole history beforehand.
+const FEW: usize = 64;
+
 /// Redshifts found for a block of values.
 #[derive(Clone, Debug, Default)]
 pub struct Solution {
@@ -29,7 +32,7 @@ pub struct Solution {
 }
 
 impl<'a> Inverter<'a> {
-    /// Prepares the inverse; `None` for quantities that have none.
+    /// Prepares the inverse for many values; `None` for quantities that have none.
     ///
     /// `future` admits z < 0 where the quantity does.
     #[must_use]
@@ -37,6 +40,18 @@ impl<'a> Inverter<'a> {
         frame: &Frame<'a>,
         quantity: &'static Quantity,
         future: bool,
+    ) -> Option<Inverter<'a>> {
+        Inverter::prepare_for(frame, quantity, future, usize::MAX)
+    }
+
+    /// Likewise for a number of values: few are each looked at by themselves, with
+    /// the same outcome.
+    #[must_use]
+    pub fn prepare_for(
+        frame: &Frame<'a>,
+        quantity: &'static Quantity,
+        future: bool,
+        values: usize,
     ) -> Option<Inverter<'a>> {
         let inverse = quantity.inverse.as_ref()?;
         let parts = match inverse {
@@ -50,7 +65,7 @@ impl<'a> Inverter<'a> {
             }
             _ => Vec::new(),
         };
-        let settled = (0.0, f64::INFINITY);
+        let settled = (f64::INFINITY, f64::NEG_INFINITY);
         let unsettled = Inverter {
             frame: *frame,
             quantity,
@@ -59,9 +74,13 @@ impl<'a> Inverter<'a> {
             parts,
             settled,
         };
-        Some(Inverter {
-            settled: unsettled.find_settled(),
-            ..unsettled
+        Some(if values < FEW {
+            unsettled
+        } else {
+            Inverter {
+                settled: unsettled.find_settled(),
+                ..unsettled
+            }
         })
     }
 
@@ -131,8 +150,11 @@ impl<'a> Inverter<'a> {
         }
         self.settle_ends(values, redshifts);
         let (low, high) = self.settled;
-        let unsettled = |(row, z): (usize, &f64)| (*z < low || *z > high).then_some(row);
-        suspect.extend(redshifts.iter().enumerate().filter_map(unsettled));
+        for (row, (value, z)) in values.iter().zip(&*redshifts).enumerate() {
+            if (*z < low || *z > high) && self.is_doubtful(*value, *z) {
+                suspect.push(row);
+            }
+        }
     }
 
     /// What is solved for, of a curve that may turn.

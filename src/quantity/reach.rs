@@ -1,6 +1,6 @@
 //! Why a value has no redshift.
 
-use super::{Inverse, Inverter};
+use super::{Inverse, Inverter, Solved};
 use crate::expansion::{Beginning, Curve};
 
 /// Why a quantity does not take a value on a branch.
@@ -12,6 +12,9 @@ pub enum Miss {
     OutsideDomain,
     /// It exceeds what the quantity reaches: this, in its unit; NaN if it is not told.
     BeyondMaximum(f64),
+    /// The quantity stays above it in the whole past and future: the smallest
+    /// value, and whether it is taken.
+    BelowMinimum(f64, bool),
     /// It lies before the beginning.
     BeforeBeginning,
     /// The model has no beginning to count from.
@@ -108,6 +111,12 @@ impl Inverter<'_> {
                 self.beyond_early_end()
             };
         }
+        if curve.future
+            && let Some((lowest, taken)) = self.lowest(curve)
+            && (given < lowest || given <= lowest && !taken)
+        {
+            return Miss::BelowMinimum(lowest, taken);
+        }
         if bottom_turns || given.is_nan() || given < 0.0 {
             Miss::OutsideDomain
         } else if bottom.redshift == 0.0 {
@@ -119,5 +128,24 @@ impl Inverter<'_> {
         } else {
             Miss::BeyondRange
         }
+    }
+
+    /// The smallest value of a curve of past and future, and whether it is taken:
+    /// where it turns, at an end of the history, or as a limit beyond it.
+    fn lowest(&self, curve: &Solved) -> Option<(f64, bool)> {
+        let frame = &self.frame;
+        let (low, high) = frame.history.range();
+        let at = |z: f64| (curve.value)(&frame.history.epoch(z), frame);
+        let turning = (curve.turning)(frame.history.turning()).iter().copied();
+        let taken = turning
+            .chain([low, 0.0, high])
+            .map(at)
+            .min_by(f64::total_cmp)?;
+        let limit = (curve.late_limit)(frame);
+        Some(if limit < taken {
+            (limit, false)
+        } else {
+            (taken, true)
+        })
     }
 }

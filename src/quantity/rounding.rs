@@ -3,8 +3,10 @@
 use super::{ILL_CONDITIONED, Inverse, Inverter, Solved};
 use crate::expansion::{Curve, Epoch, Epochs, Wanted};
 
-/// What lies between the edges that are looked at may be worse by this.
-const MARGIN: f64 = 8.0;
+/// Results may feel a change of redshift this many times over, volumes three times.
+const OUTPUT: f64 = 4.0;
+/// The same for edges, between which a redshift may be moved three times as much.
+const MARGIN: f64 = 3.0 * OUTPUT;
 
 impl Inverter<'_> {
     /// By how much the rounding of a value moves its redshift.
@@ -26,6 +28,17 @@ impl Inverter<'_> {
         }
     }
 
+    /// Whether the rounding of a value may move its redshift so far that a result
+    /// is moved by 1e-9.
+    pub(super) fn is_doubtful(&self, value: f64, redshift: f64) -> bool {
+        let (lowest, highest) = self.frame.history.range();
+        // Beyond the history there will be no result.
+        (lowest..=highest).contains(&redshift) && {
+            let spread = OUTPUT * self.uncertainty(value, redshift);
+            spread.is_nan() || spread > ILL_CONDITIONED * redshift.abs()
+        }
+    }
+
     /// The solution of spread = |y′| dz + ½ |y″| dz²: next to a turning point the
     /// slope alone would promise nothing.
     fn near_turning(&self, curve: &Solved, spread: f64, redshift: f64) -> f64 {
@@ -43,7 +56,7 @@ impl Inverter<'_> {
     }
 
     /// The widest range of redshifts, about z = 1, where rounding cannot move a
-    /// redshift by a share of 1e-9; a margin of 8 stands for what lies between edges.
+    /// redshift by a share of 1e-9, with a margin for what lies between edges.
     pub(super) fn find_settled(&self) -> (f64, f64) {
         match self.inverse {
             Inverse::Solved { .. } => self.frame.history.range(),

@@ -147,3 +147,117 @@ fn rounding_that_matters_is_said() {
     };
     assert!((2e-8..2e-7).contains(&spread), "{spread}");
 }
+
+#[test]
+fn below_the_smallest_expansion_rate_it_is_named() {
+    let history = with_radiation();
+    let limit = 67.36 * history.spec().dark_energy.density.sqrt();
+    let values = [10.0, 56.0];
+    for future in [false, true] {
+        let request = Conversion {
+            future,
+            ..conversion(&history, source("hubble_parameter", &values), &["redshift"])
+        };
+        let converted = convert(&request).unwrap();
+        assert_eq!(codes(&converted, 0), ["outside_domain"]);
+        let Detail::StaysAbove(lowest, "km/(s.Mpc)") = converted.remarks.first[0].detail else {
+            panic!("{:?}", converted.remarks.first[0])
+        };
+        assert!((lowest / limit - 1.0).abs() < 1e-14, "{lowest} {limit}");
+        let expected: &[&str] = if future { &[] } else { &["blueshift"] };
+        assert_eq!(codes(&converted, 1), expected);
+    }
+    // Phantom energy: H has a smallest value, and takes it.
+    let phantom = build(&Declaration {
+        hubble_constant: 70.0,
+        matter: 0.3,
+        dark_energy: Some(DarkEnergyDeclaration {
+            form: "constant".to_owned(),
+            density: None,
+            parameters: vec![("w".to_owned(), -2.0)],
+        }),
+        ..Declaration::default()
+    });
+    let turn = phantom.turning().rate[0];
+    let smallest = 70.0 * phantom.epoch(turn).rate;
+    let values = [10.0];
+    let converted = convert(&conversion(
+        &phantom,
+        source("hubble_parameter", &values),
+        &["age"],
+    ))
+    .unwrap();
+    assert_eq!(codes(&converted, 0), ["outside_domain"]);
+    assert_eq!(
+        converted.remarks.first[0].detail,
+        Detail::Smallest(smallest, "km/(s.Mpc)")
+    );
+}
+
+#[test]
+fn today_is_not_ill_conditioned() {
+    let history = with_radiation();
+    let outputs = ["redshift", "lookback_time", "age", "comoving_volume"];
+    for (name, value) in [
+        ("scale_factor", 1.0),
+        ("hubble_parameter", 67.36),
+        ("cmb_temperature", 2.7255),
+        ("optical_velocity", 0.0),
+        ("lookback_time", 0.0),
+        ("comoving_distance", 0.0),
+    ] {
+        let values = [value];
+        let converted = convert(&conversion(&history, source(name, &values), &outputs)).unwrap();
+        assert_eq!(converted.columns[0].values, [0.0], "{name}");
+        assert_eq!(converted.remarks.first, [], "{name}");
+    }
+    // A little away from today the rounding of a scale factor does matter.
+    let values = [1.0 - 1e-9];
+    let converted = convert(&conversion(
+        &history,
+        source("scale_factor", &values),
+        &outputs,
+    ))
+    .unwrap();
+    assert_eq!(codes(&converted, 0), ["ill_conditioned"]);
+}
+
+#[test]
+fn few_rows_are_judged_as_many_are() {
+    for history in [with_radiation(), plain(0.3, 0.1), plain(0.3, -0.8)] {
+        let frame = crate::quantity::Frame::of(&history);
+        let redshifts: Vec<f64> = (0..400)
+            .map(|i| libm::pow(10.0, f64::from(i) / 20.0 - 11.0))
+            .chain([-0.9, -1e-3, -1e-8, 0.0])
+            .collect();
+        for name in [
+            "scale_factor",
+            "age",
+            "lookback_time",
+            "comoving_distance",
+            "conformal_time",
+        ] {
+            let values: Vec<f64> = redshifts
+                .iter()
+                .map(|z| quantity(name).at(*z, &frame))
+                .collect();
+            let outputs = [
+                "redshift",
+                "age",
+                "comoving_volume",
+                "deceleration_parameter",
+            ];
+            let request = |values| Conversion {
+                future: true,
+                ..conversion(&history, source(name, values), &outputs)
+            };
+            let many = convert(&request(&values)).unwrap();
+            for (row, value) in values.iter().enumerate() {
+                let alone = convert(&request(&values[row..=row])).unwrap();
+                assert_eq!(codes(&alone, 0), codes(&many, row), "{name} {value}");
+                let cells = (alone.columns[1].values[0], many.columns[1].values[row]);
+                assert_eq!(cells.0.to_bits(), cells.1.to_bits(), "{name} {value}");
+            }
+        }
+    }
+}

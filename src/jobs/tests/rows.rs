@@ -74,6 +74,10 @@ fn the_future_gives_times_and_leaves_out_distances() {
     assert!(converted.columns[2].values[0].is_nan());
     assert_eq!(codes(&converted, 0), ["blueshift"]);
     assert_eq!(converted.remarks.first[0].column, Some(2));
+    assert_eq!(
+        converted.remarks.first[0].detail.to_string(),
+        "comoving_distance is not defined for z < 0"
+    );
     assert_eq!(codes(&converted, 1), ["beyond_model_range"]);
     assert!(converted.columns[2].values[2].is_finite());
 }
@@ -171,6 +175,15 @@ fn what_the_model_lacks_is_said() {
     ))
     .unwrap();
     assert_eq!(codes(&converted, 0), ["divergent"]);
+    let still = ["deceleration_parameter", "redshift_drift", "velocity_drift"];
+    let converted = convert(&conversion(&milne, source("redshift", &values), &still)).unwrap();
+    assert_eq!(converted.remarks.first, []);
+    assert!(
+        converted
+            .columns
+            .iter()
+            .all(|column| column.values == [0.0])
+    );
     let refused = convert(&conversion(
         &milne,
         source("redshift", &values),

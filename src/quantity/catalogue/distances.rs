@@ -79,7 +79,7 @@ pub(super) const ANGULAR_DIAMETER_DISTANCE: Quantity = Quantity {
     unit: "Mpc",
     ucd: "pos.distance;phys.cosmology",
     meaning: "Proper size over angle at that redshift.",
-    domain: "0 to its largest value, then falling again",
+    domain: "0 to its maximum in the model; decreases with redshift beyond it",
     tolerance: PRODUCT,
     table_error: Some(|accuracy| accuracy.comoving),
     scaling: HubbleScaling::Power(1),
@@ -152,7 +152,7 @@ pub(super) const LIGHT_TRAVEL_DISTANCE: Quantity = Quantity {
     symbol: "c t_L",
     unit: "Mpc",
     ucd: "pos.distance;phys.cosmology",
-    meaning: "Lookback time times the speed of light; a time in disguise.",
+    meaning: "Lookback time times the speed of light.",
     domain: "0 to below c times the age today",
     tolerance: PRODUCT,
     table_error: Some(|accuracy| accuracy.lookback),
@@ -212,6 +212,7 @@ static TRANSVERSE: Solved = Solved {
     slope: transverse_slope_mpc,
     turning: |turning| &turning.transverse,
     horizon: transverse_horizon_mpc,
+    late_limit: |_| f64::INFINITY,
     future: false,
 };
 
@@ -224,6 +225,7 @@ static ANGULAR_DIAMETER: Solved = Solved {
     },
     turning: |turning| &turning.angular_diameter,
     horizon: |_| f64::INFINITY,
+    late_limit: |_| f64::INFINITY,
     future: false,
 };
 
@@ -235,5 +237,6 @@ static LUMINOSITY: Solved = Solved {
     },
     turning: |turning| &turning.luminosity,
     horizon: |_| f64::INFINITY,
+    late_limit: |_| f64::INFINITY,
     future: false,
 };

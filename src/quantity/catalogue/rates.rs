@@ -67,7 +67,14 @@ pub(super) const DECELERATION_PARAMETER: Quantity = Quantity {
     }),
     condition: Some(Condition {
         possible: |_| true,
-        number: |deceleration, _, _| (1.0 + deceleration.abs()) / deceleration.abs(),
+        number: |deceleration, _, _| {
+            // Nothing is left of nothing, in an empty universe.
+            if deceleration == 0.0 {
+                1.0
+            } else {
+                (1.0 + deceleration.abs()) / deceleration.abs()
+            }
+        },
     }),
     inverse: None,
     undefined: always,
@@ -138,7 +145,7 @@ const NEAR_STANDSTILL: Condition = Condition {
     possible: |_| true,
     number: |drift_per_year, epoch, frame| {
         let terms = epoch.redshift.abs() + (epoch.rate - 1.0).abs();
-        if epoch.redshift == 0.0 {
+        if epoch.redshift == 0.0 || drift_per_year == 0.0 {
             1.0
         } else {
             terms / (drift_per_year * years(frame)).abs()
@@ -170,5 +177,16 @@ static EXPANSION_RATE: Solved = Solved {
     },
     turning: |turning| &turning.rate,
     horizon: |_| f64::INFINITY,
+    late_limit: |frame| {
+        let densities = frame.history.densities();
+        let exponent = densities.late_exponent();
+        if frame.history.turnaround().is_some() || exponent < 0.0 {
+            f64::INFINITY
+        } else if exponent > 0.0 {
+            0.0
+        } else {
+            frame.hubble_constant * densities.terms(1.0).dark_energy.sqrt()
+        }
+    },
     future: true,
 };
