@@ -3,8 +3,8 @@
 use super::model::Echoes;
 use crate::prepared::{BookFault, Capacity, ModelBook, Prepared};
 use crate::wire::convert::Size;
-use std::sync::Arc;
 use std::sync::atomic::AtomicBool;
+use std::sync::{Arc, OnceLock};
 
 /// The state of a running service.
 pub struct State {
@@ -18,6 +18,8 @@ pub struct State {
     pub echoes: Echoes,
     /// False when the service is about to stop.
     pub ready: Arc<AtomicBool>,
+    /// The port that it listens on, as soon as it does.
+    pub port: OnceLock<u16>,
 }
 
 /// How much a request may ask for.
@@ -67,6 +69,7 @@ impl State {
             models,
             limits: Limits::default(),
             ready: Arc::new(AtomicBool::new(true)),
+            port: OnceLock::new(),
         })
     }
 }

@@ -4,9 +4,9 @@ use super::examples::EXAMPLES;
 use super::host::base;
 use std::fmt::Write;
 
-/// The page of the service that a client reached as `host`.
-pub fn browser(host: &str) -> String {
-    let base = base(host);
+/// The page of the service that a client reached as `host`; it listens on `port`.
+pub fn browser(host: &str, port: u16) -> String {
+    let base = base(host, port);
     let mut examples = String::new();
     for example in EXAMPLES {
         // Writing to a String cannot fail.
@@ -48,12 +48,12 @@ mod tests {
             CONTENT_SECURITY_POLICY.contains(&format!("'sha256-{hash}'")),
             "the style's hash is {hash}"
         );
-        assert!(browser("a").contains(&format!("<style>{STYLE}</style>")));
+        assert!(browser("a", 8080).contains(&format!("<style>{STYLE}</style>")));
     }
 
     #[test]
     fn nothing_comes_from_outside() {
-        let page = browser("127.0.0.1:8080");
+        let page = browser("127.0.0.1:8080", 8080);
         for outside in [
             "src=",
             "<script",

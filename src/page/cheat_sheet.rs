@@ -4,11 +4,12 @@ use super::examples::EXAMPLES;
 use super::host::base;
 use std::fmt::Write;
 
-/// The cheat sheet of the service that a client reached as `host` (the value of its `Host` header).
+/// The cheat sheet of the service that a client reached as `host` (the value of its `Host` header);
+/// it listens on `port`.
 ///
 /// Every line is a comment or part of a command, so that it runs as printed.
-pub fn cheat_sheet(host: &str) -> String {
-    let base = base(host);
+pub fn cheat_sheet(host: &str, port: u16) -> String {
+    let base = base(host, port);
     let mut text = format!(
         "# Redfathom {}: redshift, cosmic time and distance, into one another.\n\n",
         env!("CARGO_PKG_VERSION")
@@ -31,7 +32,7 @@ mod tests {
 
     #[test]
     fn it_fits_on_one_screen() {
-        let text = cheat_sheet("127.0.0.1:8080");
+        let text = cheat_sheet("127.0.0.1:8080", 8080);
         assert!(text.lines().count() <= 24, "{text}");
         for line in text.lines() {
             assert!(line.chars().count() <= 80, "{line}");
@@ -40,7 +41,7 @@ mod tests {
 
     #[test]
     fn the_host_of_the_request_stands_in_each_command() {
-        let text = cheat_sheet("distances.larkfield.example");
+        let text = cheat_sheet("distances.larkfield.example", 8080);
         assert_eq!(text.matches("\ncurl ").count(), EXAMPLES.len());
         assert!(!text.contains("{base}") && !text.contains("127.0.0.1"));
     }

@@ -10,8 +10,8 @@ use crate::page::EXAMPLES;
 use crate::prepared::{Capacity, Prepared, Provenance, Unprepared};
 use std::io::Write;
 use std::net::SocketAddr;
-use std::sync::Arc;
 use std::sync::atomic::AtomicBool;
+use std::sync::{Arc, OnceLock};
 use std::time::Duration;
 use tokio::net::TcpListener;
 
@@ -53,6 +53,7 @@ pub(super) fn run(options: &ServeOptions) -> Result<(), StartFault> {
         models,
         limits: Limits::default(),
         ready: Arc::new(AtomicBool::new(true)),
+        port: OnceLock::new(),
     });
     let runtime = tokio::runtime::Builder::new_multi_thread()
         .worker_threads(capacity.workers)
@@ -72,10 +73,10 @@ async fn serve(options: &ServeOptions, state: Arc<State>) -> Result<(), StartFau
         fault,
     };
     let listener = TcpListener::bind(options.listen).await.map_err(refused)?;
-    greet(
-        listener.local_addr().map_err(refused)?,
-        state.models.default_name(),
-    );
+    let address = listener.local_addr().map_err(refused)?;
+    // It is set once, here.
+    let _ = state.port.set(address.port());
+    greet(address, state.models.default_name());
     let stop = signals.stop(Arc::clone(&state.ready), options.drain_seconds);
     let limits = ListenerLimits {
         connections: options.connections.get(),

@@ -1,13 +1,16 @@
 //! The first page: a cheat sheet for terminals, a page for browsers.
 
+use super::super::State;
 use super::super::accept::{Format, TEXT, choose};
 use super::super::document::AROUND;
 use super::super::refusal::Refusal;
 use super::super::respond::whole;
 use crate::page;
+use axum::extract;
 use axum::http::header::{CONTENT_SECURITY_POLICY, HOST, LINK};
 use axum::http::{HeaderMap, HeaderValue};
 use axum::response::Response;
+use std::sync::Arc;
 
 static HTML: Format = Format {
     name: "html",
@@ -21,16 +24,20 @@ static HTML: Format = Format {
 #[utoipa::path(get, path = "/", operation_id = "getHome", tag = AROUND,
     responses((status = 200, description = "How to use the service.", content(
         (String = "text/plain"), (String = "text/html")))))]
-pub(crate) async fn home(headers: HeaderMap) -> Result<Response, Refusal> {
+pub(crate) async fn home(
+    extract::State(state): extract::State<Arc<State>>,
+    headers: HeaderMap,
+) -> Result<Response, Refusal> {
     let host = headers
         .get(HOST)
         .and_then(|host| host.to_str().ok())
-        .unwrap_or("127.0.0.1:8080");
+        .unwrap_or_default();
+    let port = state.port.get().copied().unwrap_or(USUAL_PORT);
     // A browser names text/html; what accepts anything is a terminal.
     let format = choose(&[&TEXT, &HTML], None, &headers)?;
     let mut response = match format == &HTML {
-        true => whole(format, page::browser(host)),
-        false => whole(format, page::cheat_sheet(host)),
+        true => whole(format, page::browser(host, port)),
+        false => whole(format, page::cheat_sheet(host, port)),
     };
     let headers = response.headers_mut();
     headers.insert(
@@ -41,3 +48,6 @@ pub(crate) async fn home(headers: HeaderMap) -> Result<Response, Refusal> {
     headers.insert(LINK, HeaderValue::from_static(links));
     Ok(response)
 }
+
+/// Where the service listens unless it is told otherwise.
+const USUAL_PORT: u16 = 8080;
