@@ -46,9 +46,11 @@ pub(super) fn choose(
     if let Some(asked) = asked {
         let found = offered.iter().find(|format| format.name == asked);
         return found.copied().ok_or_else(|| {
-            refused(offered, "this route has no such format")
+            let names: Vec<_> = offered.iter().map(|format| format.name).collect();
+            Fault::new(Code::NotAcceptable, "this route has no such format")
                 .parameter("format")
                 .value(asked)
+                .allowed(names.join(", "))
         });
     }
     if !headers.contains_key(ACCEPT) {
@@ -80,9 +82,13 @@ pub(super) fn choose(
     })
 }
 
+/// A header has no place among the listed faults, so the sentence lists what there is.
 fn refused(offered: &[&'static Format], detail: &str) -> Fault {
     let names: Vec<_> = offered.iter().map(|format| format.media_type).collect();
-    Fault::new(Code::NotAcceptable, detail).allowed(names.join(", "))
+    Fault::new(
+        Code::NotAcceptable,
+        format!("{detail}: {}", names.join(", ")),
+    )
 }
 
 /// A media range and its quality.

@@ -2,7 +2,7 @@
 
 use crate::wire::{Code, Fault, Problem};
 use axum::body::Body;
-use axum::http::header::{CONTENT_LENGTH, CONTENT_TYPE, RETRY_AFTER, TRANSFER_ENCODING};
+use axum::http::header::{ALLOW, CONTENT_TYPE, RETRY_AFTER, VARY};
 use axum::http::{HeaderValue, StatusCode};
 use axum::response::{IntoResponse, Response};
 
@@ -42,7 +42,7 @@ impl IntoResponse for Refusal {
 /// The media type of a problem.
 pub(super) const PROBLEM_JSON: &str = "application/problem+json";
 
-/// Gives a refusal that the framework made by itself its problem body; its headers stay.
+/// Gives a refusal that the framework made by itself its problem body.
 pub(super) fn explained(response: Response) -> Response {
     let status = response.status();
     let plain = status.is_client_error() || status.is_server_error();
@@ -66,8 +66,9 @@ pub(super) fn explained(response: Response) -> Response {
         _ => (Code::InternalError, "the service met a fault of its own"),
     };
     let mut explained = Refusal::from(Fault::new(code, detail)).into_response();
-    for (name, value) in response.headers() {
-        if ![CONTENT_TYPE, CONTENT_LENGTH, TRANSFER_ENCODING].contains(name) {
+    // The rest, such as a tag, belongs to the answer that the framework refused to send.
+    for name in [ALLOW, VARY] {
+        if let Some(value) = response.headers().get(&name) {
             explained.headers_mut().insert(name, value.clone());
         }
     }
