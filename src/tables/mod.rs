@@ -42,7 +42,8 @@ pub struct Given {
 impl Table {
     /// The table of a conversion: the given column, then the outputs.
     ///
-    /// An output that is the given column again is left out.
+    /// An output that is the given column again takes its place, so that its cells are those of
+    /// the other formats.
     pub fn of(given: Given, converted: Converted) -> Table {
         let rows = given.values.len();
         let name = column_name(given.quantity, &given.unit, given.per_h, false);
@@ -61,7 +62,8 @@ impl Table {
                 column.per_h,
                 per_sound_horizon,
             );
-            if columns.first().is_some_and(|given| given.name == name) {
+            if let Some(given) = columns.first_mut().filter(|given| given.name == name) {
+                given.values = column.values;
                 continue;
             }
             let label = label(column.quantity, column.per_h, per_sound_horizon);
