@@ -6,7 +6,7 @@ use crate::jobs::PrintedEpochs;
 use crate::model::Spec;
 use crate::prepared::{Entry, ModelBook, Overloaded, Provenance, Unprepared};
 use crate::wire::model::{Model, ModelEcho, ModelEntry, SpecEcho, model_faults};
-use crate::wire::{Code, Fault, NameOr, nearest};
+use crate::wire::{Code, Fault, NameOr, meant};
 use std::borrow::Cow;
 use std::collections::HashMap;
 use std::sync::Arc;
@@ -186,19 +186,18 @@ pub(crate) fn entry(entry: &Entry) -> ModelEntry<'_> {
     }
 }
 
-/// The nearest name to one that no model has, as the end of a sentence.
-pub(super) fn meant(state: &State, name: &str) -> String {
-    let near = nearest(name, state.models.names());
-    near.map(|name| format!("; did you mean \"{name}\"?"))
-        .unwrap_or_default()
+/// The refusal of a name that no model has; its place is for the caller to say.
+pub(super) fn no_such_model(state: &State, code: Code, name: &str) -> Fault {
+    let shown: String = name.chars().take(64).collect();
+    let meant = meant(name, state.models.names());
+    let names: Vec<_> = state.models.names().collect();
+    Fault::new(code, format!("there is no model \"{shown}\"{meant}"))
+        .value(name)
+        .allowed(names.join(", "))
 }
 
 fn unknown(state: &State, name: &str) -> Fault {
-    let shown: String = name.chars().take(64).collect();
-    let detail = format!("there is no model \"{shown}\"{}", meant(state, name));
-    Fault::new(Code::UnknownModel, detail)
-        .at("/model")
-        .value(name)
+    no_such_model(state, Code::UnknownModel, name).at("/model")
 }
 
 fn unprepared(fault: Unprepared) -> Fault {

@@ -1,7 +1,7 @@
 //! The operator's file of models: read once, at start; anything wrong in it stops the start.
 
 use crate::prepared::{BookFault, ModelBook};
-use crate::wire::operator_file;
+use crate::wire::{Fault, operator_file};
 use std::fs;
 use std::path::{Path, PathBuf};
 
@@ -55,6 +55,14 @@ pub(super) fn open(file: Option<&Path>, chosen: Option<&str>) -> Result<ModelBoo
     Ok(book)
 }
 
+/// What is wrong, with what would be right.
+fn told(fault: &Fault) -> String {
+    match &fault.allowed {
+        Some(allowed) => format!("{fault} (allowed: {allowed})"),
+        None => fault.to_string(),
+    }
+}
+
 fn add(book: &mut ModelBook, path: &Path) -> Result<(), ModelsFault> {
     let wrong = |pointer: String, detail: String| ModelsFault::Wrong {
         path: path.to_owned(),
@@ -65,12 +73,8 @@ fn add(book: &mut ModelBook, path: &Path) -> Result<(), ModelsFault> {
         path: path.to_owned(),
         fault,
     })?;
-    let file = operator_file::read(&text).map_err(|fault| {
-        wrong(
-            fault.pointer().unwrap_or_default().to_owned(),
-            fault.to_string(),
-        )
-    })?;
+    let file = operator_file::read(&text)
+        .map_err(|fault| wrong(fault.pointer().unwrap_or_default().to_owned(), told(&fault)))?;
     for model in file.models {
         // No name that can be given needs escaping, but this may be another.
         let pointer = format!(
@@ -89,8 +93,11 @@ fn add(book: &mut ModelBook, path: &Path) -> Result<(), ModelsFault> {
         })?;
     }
     if let Some(name) = file.default {
-        book.set_default(&name)
-            .map_err(|fault| wrong("/default".to_owned(), format!("{name}: {fault}")))?;
+        book.set_default(&name).map_err(|fault| {
+            let known: Vec<_> = book.names().collect();
+            let detail = format!("{name}: {fault}; known are {}", known.join(", "));
+            wrong("/default".to_owned(), detail)
+        })?;
     }
     Ok(())
 }

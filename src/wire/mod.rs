@@ -19,7 +19,7 @@ pub mod written;
 pub use code::Code;
 pub use fault::{Fault, Place};
 pub use name_or::NameOr;
-pub use nearest::nearest;
+pub use nearest::meant;
 pub use numbers::Numbers;
 pub use problem::{Problem, ProblemPage};
 pub use query::Query;

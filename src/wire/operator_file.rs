@@ -5,6 +5,7 @@ use super::json::{self, Bounds, Node};
 use super::model::DeclaredModel;
 use crate::model::Declaration;
 use serde::Deserialize;
+use serde::de::IgnoredAny;
 
 /// The file as written.
 #[derive(Clone, Debug, PartialEq)]
@@ -59,6 +60,9 @@ pub fn read(file: &[u8]) -> Result<OperatorFile, Fault> {
 #[serde(deny_unknown_fields)]
 struct Rest {
     default: Option<String>,
+    /// Taken out before; named here so that a fault lists it.
+    #[serde(rename = "models")]
+    _models: Option<IgnoredAny>,
 }
 
 #[derive(Deserialize)]

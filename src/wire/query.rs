@@ -2,7 +2,7 @@
 
 use super::code::Code;
 use super::fault::Fault;
-use super::nearest::nearest;
+use super::nearest::meant;
 use std::borrow::Cow;
 
 /// The parameters of a query in the order they were written.
@@ -62,13 +62,16 @@ impl<'q> Query<'q> {
             return Ok(());
         };
         let key = cut(&key);
-        let meant = nearest(key, known)
-            .map(|name| format!("; did you mean \"{name}\"?"))
-            .unwrap_or_default();
+        let known: Vec<&str> = known.collect();
+        let meant = meant(key, known.iter().copied());
         let detail = format!("there is no query parameter \"{key}\" here{meant}");
-        Err(Fault::new(Code::UnknownParameter, detail)
+        let fault = Fault::new(Code::UnknownParameter, detail)
             .parameter(key)
-            .value(value))
+            .value(value);
+        Err(match known.is_empty() {
+            true => fault,
+            false => fault.allowed(known.join(", ")),
+        })
     }
 
     /// The same text for the same parameters in any order.

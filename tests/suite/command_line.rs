@@ -172,6 +172,17 @@ fn an_unknown_default_is_refused_with_the_known_names() {
         message.contains("larkfeld") && message.contains("planck-2018-cmb-lensing"),
         "{message}"
     );
+    let file = File::new("unknown-default", r#"{"default": "theirs"}"#);
+    let output = run(&["--listen", "127.0.0.1:0", "--models", file.path()]);
+    let message = text(&output.stderr);
+    assert!(message.contains("round-70-30"), "{message}");
+    let file = File::new("unknown-member", r#"{"x": 1}"#);
+    let output = run(&["--listen", "127.0.0.1:0", "--models", file.path()]);
+    let message = text(&output.stderr);
+    assert!(
+        message.contains("/x: ") && message.contains("allowed: default, models"),
+        "{message}"
+    );
 }
 
 #[test]
@@ -260,5 +271,20 @@ fn the_cheat_sheet_is_a_script_that_works_as_printed() {
         "{}\n{}",
         text(&output.stdout),
         text(&output.stderr)
+    );
+}
+
+/// A Host that can't be printed into commands is replaced by the address that was listened on.
+#[test]
+fn the_cheat_sheet_names_the_real_port_whatever_the_host() {
+    let service = Service::start(&[]);
+    let sheet = shell(&format!(
+        "curl -sS -H 'Host: a;b' http://{}/",
+        service.address
+    ));
+    let sheet = text(&sheet.stdout);
+    assert!(
+        sheet.contains(&format!("curl 'http://{}/v1/", service.address)),
+        "{sheet}"
     );
 }

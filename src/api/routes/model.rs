@@ -3,11 +3,11 @@
 use super::super::State;
 use super::super::accept::JSON;
 use super::super::document::MODELS;
-use super::super::model::{entry, meant};
+use super::super::model::{entry, no_such_model};
 use super::super::refusal::Refusal;
 use super::super::respond::tagged;
 use crate::wire::model::ModelEntry;
-use crate::wire::{Code, Fault, Query};
+use crate::wire::{Code, Query};
 use axum::extract::{self, Path, RawQuery};
 use axum::http::HeaderMap;
 use axum::response::Response;
@@ -15,7 +15,7 @@ use std::sync::Arc;
 
 /// Shows a model that has a name
 ///
-/// Its closed numbers, where they come from, and their errors. For example
+/// Its closed numbers, where they come from, and the errors that are published of them. For example
 /// `planck-2018-cmb-lensing`: H0 = 67.36 ± 0.54 km/s/Mpc, matter 0.3153 ± 0.0073.
 #[utoipa::path(get, path = "/v1/models/{name}", operation_id = "getModel", tag = MODELS,
     params(("name" = String, Path, description = "The name of a model.", example = "planck-2018-cmb-lensing", pattern = "^[a-z0-9][a-z0-9-]{0,63}$")),
@@ -28,11 +28,8 @@ pub(crate) async fn model(
 ) -> Result<Response, Refusal> {
     Query::read(query.as_deref())?.finish(std::iter::empty())?;
     let Some(found) = state.models.get(&name) else {
-        let detail = format!("there is no model of this name{}", meant(&state, &name));
-        return Err(Fault::new(Code::ModelNotFound, detail)
-            .parameter("name")
-            .value(name)
-            .into());
+        let fault = no_such_model(&state, Code::ModelNotFound, &name);
+        return Err(fault.parameter("name").into());
     };
     tagged(
         &JSON,

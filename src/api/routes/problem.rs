@@ -4,7 +4,7 @@ use super::super::accept::{JSON, TEXT, choose};
 use super::super::document::AROUND;
 use super::super::refusal::Refusal;
 use super::super::respond::whole;
-use crate::wire::{Code, Fault, ProblemPage, nearest};
+use crate::wire::{Code, Fault, ProblemPage, meant};
 use axum::extract::Path;
 use axum::http::HeaderMap;
 use axum::response::Response;
@@ -23,8 +23,7 @@ pub(crate) async fn problem(
     let format = choose(&[&JSON, &TEXT], None, &headers)?;
     let Some(code) = Code::named(&name) else {
         let known = Code::ALL.iter().map(|code| code.name());
-        let meant = nearest(&name, known).map(|name| format!("; did you mean \"{name}\"?"));
-        let detail = format!("there is no such problem code{}", meant.unwrap_or_default());
+        let detail = format!("there is no such problem code{}", meant(&name, known));
         return Err(Fault::new(Code::NotFound, detail)
             .parameter("code")
             .value(name)

@@ -2,7 +2,7 @@
 
 use super::super::code::Code;
 use super::super::fault::Fault;
-use super::resolve::unit_fault;
+use super::unit::unit_fault;
 use crate::jobs::{At, ConvertFault};
 
 /// The fault with its place in the body.
@@ -24,11 +24,25 @@ pub fn convert_fault(fault: &ConvertFault) -> Fault {
             .at(format!("/to/{output}"))
             .value(*quantity),
         ConvertFault::NoSuchBranch {
-            number, branches, ..
-        } => Fault::new(Code::OutOfRange, detail)
-            .at("/from/branch")
-            .value(number.to_string())
-            .allowed(format!("1 to {branches}, near, far, all")),
+            quantity,
+            number,
+            branches,
+        } => {
+            let count = match branches {
+                1 => "one branch".to_owned(),
+                _ => format!("{branches} branches"),
+            };
+            let detail =
+                format!("{quantity} has {count} in this model, so none is number {number}");
+            let numbers = match branches {
+                1 => "1".to_owned(),
+                _ => format!("1 to {branches}"),
+            };
+            Fault::new(Code::OutOfRange, detail)
+                .at("/from/branch")
+                .value(number.to_string())
+                .allowed(format!("{numbers}, near, far, all"))
+        }
     }
 }
 

@@ -7,6 +7,7 @@ mod query;
 mod request;
 mod resolve;
 pub mod schema;
+mod unit;
 
 pub use answer::{Accuracy, written};
 pub use faults::convert_fault;

@@ -4,12 +4,13 @@ use super::super::code::Code;
 use super::super::fault::Fault;
 use super::super::model::Model;
 use super::super::name_or::NameOr;
-use super::super::nearest::nearest;
+use super::super::nearest::meant;
 use super::super::query::cut;
 use super::request::{Branch, ConvertRequest, From, OutputRequest, PerSoundHorizon};
+use super::unit::unit;
 use crate::expansion::History;
 use crate::jobs::{self, Conversion, Output, PrintedEpochs, Source};
-use crate::quantity::{QUANTITIES, Quantity, Unit, UnitFault, named};
+use crate::quantity::{QUANTITIES, Quantity, named};
 use crate::tables::Given;
 
 /// A request whose names are known and whose size is allowed.
@@ -238,10 +239,7 @@ fn wanted(output: NameOr<OutputRequest>, number: usize) -> Result<Wanted, Fault>
 
 fn known(name: &str, pointer: impl Fn() -> String) -> Result<&'static Quantity, Fault> {
     named(name).ok_or_else(|| {
-        let meant = nearest(name, QUANTITIES.iter().map(|quantity| quantity.name));
-        let meant = meant
-            .map(|name| format!("; did you mean \"{name}\"?"))
-            .unwrap_or_default();
+        let meant = meant(name, QUANTITIES.iter().map(|quantity| quantity.name));
         let detail = format!("there is no quantity \"{}\"{meant}", cut(name));
         Fault::new(Code::UnknownQuantity, detail)
             .at(pointer())
@@ -257,25 +255,4 @@ fn names(wanted: impl Fn(&Quantity) -> bool) -> String {
         .map(|quantity| quantity.name)
         .collect();
     names.join(", ")
-}
-
-fn unit(
-    quantity: &Quantity,
-    text: Option<String>,
-    pointer: impl Fn() -> String,
-) -> Result<Unit, Fault> {
-    let Some(text) = text else {
-        return Ok(quantity.default_unit());
-    };
-    let unit = Unit::parse(&text).and_then(|unit| unit.to(&quantity.default_unit()).map(|_| unit));
-    unit.map_err(|fault| unit_fault(&fault).at(pointer()).value(text))
-}
-
-/// The fault of a unit, without its place.
-pub(super) fn unit_fault(fault: &UnitFault) -> Fault {
-    let code = match fault {
-        UnitFault::Mismatch { .. } => Code::UnitMismatch,
-        UnitFault::Malformed { .. } | UnitFault::Unknown { .. } => Code::UnknownUnit,
-    };
-    Fault::new(code, fault.to_string())
 }

@@ -2,9 +2,10 @@
 
 use super::super::code::Code;
 use super::super::fault::Fault;
-use super::super::nearest::nearest;
+use super::super::nearest::meant;
 use super::elements::{Cell, Elements};
 use super::node::Node;
+use crate::model::DARK_ENERGY_FORMS;
 use serde::de::value::{BorrowedStrDeserializer, StringDeserializer};
 use serde::de::{
     DeserializeSeed, Deserializer, Error, Expected, IntoDeserializer, MapAccess, Unexpected,
@@ -165,7 +166,10 @@ impl Error for Fault {
     }
 
     fn unknown_variant(variant: &str, expected: &'static [&'static str]) -> Fault {
-        let detail = format!("there is no \"{variant}\" here{}", meant(variant, expected));
+        let detail = format!(
+            "there is no \"{variant}\" here{}",
+            meant(variant, expected.iter().copied())
+        );
         Fault::new(Code::OutOfRange, detail)
             .value(variant)
             .allowed(expected.join(", "))
@@ -176,7 +180,7 @@ impl Error for Fault {
         let shown: String = field.chars().take(40).collect();
         let detail = format!(
             "there is no member \"{shown}\" here{}",
-            meant(field, expected)
+            meant(field, expected.iter().copied())
         );
         Fault::new(Code::UnknownField, detail)
             .allowed(expected.join(", "))
@@ -185,12 +189,12 @@ impl Error for Fault {
     }
 
     fn missing_field(field: &'static str) -> Fault {
-        Fault::new(
-            Code::MissingField,
-            format!("the member \"{field}\" is missing"),
-        )
-        .at("")
-        .inside(field)
+        let detail = format!("the member \"{field}\" is missing");
+        let fault = Fault::new(Code::MissingField, detail).at("").inside(field);
+        match field {
+            "form" => fault.allowed(form_names()),
+            _ => fault,
+        }
     }
 
     fn duplicate_field(field: &'static str) -> Fault {
@@ -201,10 +205,8 @@ impl Error for Fault {
     }
 }
 
-/// The end of a sentence that offers the nearest known name.
-fn meant(word: &str, known: &[&str]) -> String {
-    match nearest(word, known.iter().copied()) {
-        Some(name) => format!("; did you mean \"{name}\"?"),
-        None => String::new(),
-    }
+/// What the one member that is a word may say.
+fn form_names() -> String {
+    let names: Vec<_> = DARK_ENERGY_FORMS.iter().map(|form| form.name).collect();
+    names.join(", ")
 }

@@ -7,7 +7,7 @@ use super::super::name_or::NameOr;
 use super::super::query::{Query, number};
 use crate::model::{DARK_ENERGY_FORMS, DarkEnergyDeclaration, Declaration, RadiationDeclaration};
 use serde::Deserialize;
-use serde::de::{Deserializer, Error, MapAccess, Visitor};
+use serde::de::{Deserializer, Error, IgnoredAny, MapAccess, Visitor};
 use std::borrow::Cow;
 use std::fmt;
 use std::sync::LazyLock;
@@ -156,7 +156,11 @@ fn tree<'m>(members: &'m [(Cow<'_, str>, Cow<'_, str>)]) -> Result<Node<'m>, Fau
 fn dotted(fault: &Fault) -> Fault {
     let pointer = fault.pointer().unwrap_or_default();
     let name = pointer.trim_start_matches('/').replace('/', ".");
-    fault.clone().parameter(name)
+    let mut fault = fault.clone();
+    if fault.code == Code::MissingField {
+        fault.detail = format!("the query parameter \"{name}\" is missing");
+    }
+    fault.parameter(name)
 }
 
 impl<'de> Deserialize<'de> for DeclaredDarkEnergy {
@@ -176,7 +180,8 @@ impl<'de> Visitor<'de> for DarkEnergyVisitor {
 
     /// Which parameter belongs to which form is for the model to say.
     fn visit_map<A: MapAccess<'de>>(self, mut members: A) -> Result<Self::Value, A::Error> {
-        let (mut form, mut density, mut parameters) = (None, None, Vec::new());
+        let (mut form, mut density, mut parameters) = (None::<String>, None, Vec::new());
+        let mut strange: Option<String> = None;
         while let Some(name) = members.next_key::<String>()? {
             match name.as_str() {
                 "form" => form = Some(members.next_value()?),
@@ -184,11 +189,20 @@ impl<'de> Visitor<'de> for DarkEnergyVisitor {
                 other if DARK_ENERGY_MEMBERS.contains(&other) => {
                     parameters.push((name, members.next_value()?));
                 }
-                other => return Err(A::Error::unknown_field(other, &DARK_ENERGY_MEMBERS)),
+                _ => {
+                    members.next_value::<IgnoredAny>()?;
+                    strange.get_or_insert(name);
+                }
             }
         }
+        let form = form.ok_or_else(|| A::Error::missing_field("form"))?;
+        // A form that does not exist may have any member: the form is what is wrong then.
+        let is_form = DARK_ENERGY_FORMS.iter().any(|known| known.name == form);
+        if let (true, Some(strange)) = (is_form, strange) {
+            return Err(A::Error::unknown_field(&strange, &DARK_ENERGY_MEMBERS));
+        }
         Ok(DeclaredDarkEnergy {
-            form: form.ok_or_else(|| A::Error::missing_field("form"))?,
+            form,
             density,
             parameters,
         })

@@ -4,5 +4,6 @@ mod around;
 mod bad_input;
 pub(crate) mod client;
 mod convert;
+mod hints;
 mod models;
 mod problems;
