@@ -61,8 +61,8 @@ pub(crate) struct Base;
 const DESCRIPTION: &str = "Turns redshift, cosmic time and distance into one another under a declared cosmological model.\n\n\
 The service is stateless: the model travels with the request or is named, and every answer names it by its fingerprint, \
 with the version of the service and the numerical accuracy reached. That accuracy says how well the numbers follow from \
-the declared model; it says nothing about how well the model describes the universe, and below z ≈ 0.03 peculiar motion \
-dominates anyway.\n\n\
+the declared model; it says nothing about how well the model describes the universe, and below z ≈ 0.03 a peculiar \
+motion of some 300 km/s is the largest error of a distance anyway.\n\n\
 Columns in, columns out, row for row: a row that can't be converted is null and has a remark with its code; it spoils no \
 other row. A request that can't be understood is refused whole by a problem (RFC 9457). All POSTs are pure computations \
 and safe to repeat. Bodies may be packed (Content-Encoding gzip, br, zstd). `x-request-id` and `traceparent` are returned. \

@@ -30,7 +30,7 @@ pub struct QuantityEntry {
     pub description: &'static str,
     /// The values it takes.
     pub domain: &'static str,
-    /// The numerical error that is promised and tested, for a condition number up to 1.
+    /// The numerical error that is promised and tested, for a condition number up to 1; an error grows with a larger one. The column of an answer states what holds there: this, or more where the model's tables, a conversion through them, or the last digit of a modulus make more.
     pub accuracy: CatalogueAccuracy,
     /// Whether a redshift follows from it, so that it may stand in `from`.
     pub invertible: bool,
@@ -59,7 +59,7 @@ pub struct CatalogueAccuracy {
     #[serde(skip_serializing_if = "Option::is_none")]
     #[schema(nullable = false)]
     pub absolute: Option<f64>,
-    /// Of a difference: in units in the last place of the larger term.
+    /// Of a difference, which passes through zero: in units in the last place of its larger term; `relative` then holds as z → 0.
     #[serde(skip_serializing_if = "Option::is_none")]
     #[schema(nullable = false)]
     pub ulps_of_larger_term: Option<f64>,

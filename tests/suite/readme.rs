@@ -183,7 +183,7 @@ fn quantities() -> String {
 fn models() -> String {
     let book = ModelBook::shipped().unwrap();
     let mut table =
-        "| model | | H0, km/s/Mpc | Ω_m | fingerprint | source |\n|---|---|---|---|---|---|\n"
+        "| model | | H0, km/(s.Mpc) | Ω_m | fingerprint | source |\n|---|---|---|---|---|---|\n"
             .to_owned();
     for set in PUBLISHED_SETS
         .iter()

@@ -18,12 +18,15 @@ use std::sync::Arc;
 
 /// Converts a few values
 ///
-/// The same as POST with up to 1000 values in the query, bit for bit; an answer has an entity tag.
+/// The bytes that POST answers, for up to 1000 values in the query; an answer has an entity tag. Given
+/// values per h, and a sound horizon other than the model's own, can be written in POST only.
 /// Worked: `?redshift=3&to=age&hubble_constant=70&matter=1` gives (2/3)/H0/8 = 1.1641 Gyr.
 #[utoipa::path(get, path = "/v1/convert", operation_id = "getConvert", tag = CONVERT,
     params(ConvertQuery),
     responses((status = 200, description = "The columns.", content(
-        (ConvertAnswer = "application/json", example = json!(examples::answer())), (String = "text/plain"), (String = "text/csv")))))]
+        (ConvertAnswer = "application/json", example = json!(examples::answer())), (String = "text/plain"), (String = "text/csv")), headers(
+        ("redfathom-model" = String, description = "The fingerprint of the model; of text and csv only, JSON has it inside."),
+        ("redfathom-version" = String, description = "The version of the service; of text and csv only.")))))]
 pub(crate) async fn get_convert(
     extract::State(state): extract::State<Arc<State>>,
     RawQuery(query): RawQuery,

@@ -29,7 +29,9 @@ use std::sync::Arc;
         ("declared" = (summary = "A declared model, other units", value = json!(examples::value(examples::DECLARED)))),
         ("branches" = (summary = "Both redshifts of an angular-diameter distance", value = json!(examples::value(examples::BRANCHES)))))),
     responses((status = 200, description = "The columns.", content(
-        (ConvertAnswer = "application/json", example = json!(examples::answer())), (String = "text/plain"), (String = "text/csv")))))]
+        (ConvertAnswer = "application/json", example = json!(examples::answer())), (String = "text/plain"), (String = "text/csv")), headers(
+        ("redfathom-model" = String, description = "The fingerprint of the model; of text and csv only, JSON has it inside."),
+        ("redfathom-version" = String, description = "The version of the service; of text and csv only.")))))]
 pub(crate) async fn convert(
     extract::State(state): extract::State<Arc<State>>,
     RawQuery(query): RawQuery,

@@ -75,10 +75,12 @@ impl IntoParams for FormatQuery {
     }
 }
 
-const NUMBERS: &str = "^(null|[-+]?([0-9]+[.]?[0-9]*|[.][0-9]+)([eE][-+]?[0-9]{1,2})?)(,(null|[-+]?([0-9]+[.]?[0-9]*|[.][0-9]+)([eE][-+]?[0-9]{1,2})?))*$";
+const NUMBERS: &str = "^(null|[-+]?([0-9]+[.]?[0-9]*|[.][0-9]+)([eE]([-+]?[0-9]{1,2}|-[0-9]{3}|[+]?[12][0-9]{2}|[+]?30[0-7]))?)\
+    (,(null|[-+]?([0-9]+[.]?[0-9]*|[.][0-9]+)([eE]([-+]?[0-9]{1,2}|-[0-9]{3}|[+]?[12][0-9]{2}|[+]?30[0-7]))?))*$";
 const OUTPUTS: &str = "^[a-z_]+(:[^,:]+){0,2}(,[a-z_]+(:[^,:]+){0,2})*$";
-const TO: &str = "The quantities wanted, with commas between them, each as `name`, `name:unit` or `name:unit:per_h`, such as \
-    `age:Myr,comoving_distance:Mpc:per_h`. Without it: redshift, age, lookback_time, comoving_distance, \
+const TO: &str = "The quantities wanted, with commas between them, each as `name`, `name:unit`, `name:unit:per_h` or \
+    `name:per_sound_horizon` (the model's own sound horizon), such as `age:Myr,comoving_distance:Mpc:per_h`; per h means \
+    times h, so that `comoving_distance:Mpc:per_h` is in Mpc over h. Without it: redshift, age, lookback_time, comoving_distance, \
     luminosity_distance, angular_diameter_distance, distance_modulus, angular_scale, comoving_volume.";
 const BRANCH: &str = "Which redshift is meant where several give the value: `near` (also without this parameter), `far`, \
     a number counted from 1 at the lowest, or `all`.";

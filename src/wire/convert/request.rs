@@ -38,7 +38,7 @@ pub struct From {
     /// The unit of the values, a VOUnits 1.1 string; without it the unit that GET /v1/quantities lists.
     #[schema(nullable = false, max_length = 100)]
     pub unit: Option<String>,
-    /// Whether the values are multiplied by h = H0/(100 km/s/Mpc) to the power of the quantity.
+    /// Whether the values are multiplied by h = H0/(100 km/(s.Mpc)) to the power of the quantity, as lengths in Mpc over h are; the unit string then is Mpc.
     #[schema(nullable = false)]
     pub per_h: Option<bool>,
     /// Which redshift is meant where several give the value: `near` (the lowest, also without this member), `far` (the highest), a number counted from 1 at the lowest, or `all`.
@@ -56,7 +56,7 @@ pub struct OutputRequest {
     /// The unit wanted, a VOUnits 1.1 string of the same dimension.
     #[schema(nullable = false, max_length = 100)]
     pub unit: Option<String>,
-    /// Whether the values are multiplied by h = H0/(100 km/s/Mpc) to the power of the quantity; moduli gain 5 log10 h.
+    /// Whether the values are multiplied by h = H0/(100 km/(s.Mpc)) to the power of the quantity, so that lengths are in Mpc over h; the unit string stays Mpc. Moduli gain 5 log10 h.
     #[schema(nullable = false)]
     pub per_h: Option<bool>,
     /// Whether a distance is divided by the sound horizon: `true` for the model's own integral to its drag redshift, or a length in Mpc.

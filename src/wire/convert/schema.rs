@@ -5,10 +5,11 @@ use super::super::schema::{closed_object, one_of, reference, words};
 use super::super::service::Service;
 use super::answer::Accuracy;
 use super::request::{LONGEST_SOUND_HORIZON_MPC, OutputRequest};
+use crate::jobs::Code;
 use crate::quantity::{QUANTITIES, Quantity};
 use std::borrow::Cow;
 use utoipa::openapi::RefOr;
-use utoipa::openapi::schema::{ArrayBuilder, ObjectBuilder, Schema, SchemaType, Type};
+use utoipa::openapi::schema::{ArrayBuilder, Object, ObjectBuilder, Schema, SchemaType, Type};
 use utoipa::{PartialSchema, ToSchema};
 
 /// Gives a marker the schema that `$schema` makes, and those that it refers to.
@@ -154,7 +155,7 @@ pub struct Column {
     /// The sound horizon in Mpc that the values are divided by.
     #[schema(nullable = false)]
     pub per_sound_horizon: Option<f64>,
-    /// The numerical accuracy, for the declared model and a condition number up to 1.
+    /// The numerical error of the values, for the numbers given and declared taken as exact, and a condition number up to 1. The condition number is the largest relative change of a value over that of a number it follows from; where it is larger the error grows with it, and from 1e-9/2^-52 on, some 4.5 million, the row says `ill_conditioned`. For a difference that passes through zero the figure holds as z → 0; elsewhere its error is told in units in the last place of its larger term: `ulps_of_larger_term` in GET /v1/quantities.
     pub accuracy: Accuracy,
     /// A number or null for each given value.
     pub values: Vec<Option<f64>>,
@@ -181,17 +182,55 @@ pub struct Remark {
     /// The output it is about; absent for the whole row.
     #[schema(nullable = false)]
     pub column: Option<String>,
-    /// missing, not_finite, blueshift, outside_domain, beyond_maximum, before_beginning, no_beginning, beyond_model_range, divergent (these null the value), beyond_physics, ill_conditioned (the value stays); further ones may come.
+    /// What it says; the schema tells each code.
+    #[schema(schema_with = remark_code)]
     pub code: String,
     /// What makes it exact.
     #[schema(nullable = false)]
     pub detail: Option<String>,
 }
 
+/// The codes that conversions say.
+const SAID: [Code; 11] = [
+    Code::Missing,
+    Code::NotFinite,
+    Code::Blueshift,
+    Code::OutsideDomain,
+    Code::BeyondMaximum,
+    Code::BeforeBeginning,
+    Code::NoBeginning,
+    Code::BeyondModelRange,
+    Code::BeyondPhysics,
+    Code::Divergent,
+    Code::IllConditioned,
+];
+
+/// A word, with what each means; no enumeration, since further ones may come.
+fn remark_code() -> Object {
+    let sentence = |code: &Code| {
+        let end = if code.keeps_value() {
+            ""
+        } else {
+            "; the value is null"
+        };
+        format!("- `{}`: {}{end}.", code.name(), code.meaning())
+    };
+    let sentences: Vec<_> = SAID.iter().map(sentence).collect();
+    let description = format!(
+        "What it says; further codes may come.\n\n{}",
+        sentences.join("\n")
+    );
+    ObjectBuilder::new()
+        .schema_type(Type::String)
+        .description(Some(description))
+        .examples(["missing"])
+        .build()
+}
+
 /// How many rows have a code.
 #[derive(Debug, ToSchema)]
 pub struct RemarkCount {
-    /// The code.
+    /// The code, as in a remark.
     pub code: String,
     /// The rows.
     pub rows: u64,

@@ -22,7 +22,7 @@ pub struct ModelEntry<'a> {
     pub name: &'a str,
     /// What it is, for a person.
     pub title: &'a str,
-    /// How well its numbers were checked against their source: confirmed, partly_confirmed, from_memory; operator for the team's own.
+    /// How well its numbers were checked: confirmed (each number that its source prints was compared with it; a note names what is not printed there), partly_confirmed (some were), from_memory (none was); operator for the team's own.
     pub status: &'static str,
     /// The label of the spec.
     pub fingerprint: &'a str,
@@ -41,11 +41,11 @@ pub struct ModelEntry<'a> {
     #[serde(skip_serializing_if = "str::is_empty")]
     #[schema(required = false)]
     pub column: &'static str,
-    /// What is not said elsewhere.
+    /// What is not said elsewhere, such as which numbers the source does not print.
     #[serde(skip_serializing_if = "str::is_empty")]
     #[schema(required = false)]
     pub note: &'static str,
-    /// The errors of its numbers.
+    /// The errors of those of its numbers that the source gives any for; the others have none here.
     #[serde(skip_serializing_if = "Option::is_none")]
     #[schema(nullable = false)]
     pub uncertainty: Option<UncertaintyEntry>,

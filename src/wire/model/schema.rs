@@ -44,7 +44,7 @@ impl PartialSchema for DeclaredModel {
         let description = "A model by its numbers today, as fractions of the critical density. Without dark_energy a \
             cosmological constant closes the sum to 1, curvature being 0 unless given; dark_energy without density \
             closes likewise; density without curvature lets curvature close; with both, the sum with radiation must \
-            be 1 within 1e-9.";
+            be 1 within 1e-9, and what is missing goes into the density, as the model of the answer shows.";
         closed_object(description)
             .property("hubble_constant", number(&HUBBLE_CONSTANT))
             .property("matter", number(&MATTER))
@@ -148,7 +148,7 @@ pub struct ModelAnswer {
     /// Its name, if it has one.
     #[schema(nullable = false)]
     pub name: Option<String>,
-    /// How well its numbers were checked against their source: confirmed, partly_confirmed, from_memory; operator for the team's own.
+    /// How well its numbers were checked: confirmed (each number that its source prints was compared with it; a note names what is not printed there), partly_confirmed (some were), from_memory (none was); operator for the team's own.
     #[schema(nullable = false)]
     pub status: Option<String>,
     /// True if the request named no model and this one is the default.
