@@ -2,6 +2,7 @@
 
 use super::Table;
 use super::digits::rounded;
+use crate::jobs::{Code, Remarks};
 use std::fmt::Write;
 
 /// The text in chunks, `footer` being its last line.
@@ -64,16 +65,31 @@ fn block(table: &Table, widths: &Widths, row: usize, out: &mut String) {
         );
         let _ = writeln!(out, "{}", line.trim_end());
     }
-    let codes: Vec<_> = table
-        .remarks
-        .row_codes(row)
-        .map(|code| (code.name(), code.meaning()))
-        .collect();
-    for (code, meaning) in codes {
-        let _ = writeln!(out, "# {code}: {meaning}");
+    for code in table.remarks.row_codes(row) {
+        let details = details(&table.remarks, row, code);
+        let _ = writeln!(out, "# {}: {}{details}", code.name(), code.meaning());
     }
     if row + 1 < table.rows {
         out.push('\n');
+    }
+}
+
+/// What makes a row's remarks of one code exact, each once; empty where nothing does.
+fn details(remarks: &Remarks, row: usize, code: Code) -> String {
+    let start = remarks.first.partition_point(|remark| remark.row < row);
+    let of_row = remarks.first.iter().skip(start);
+    let of_code = of_row
+        .take_while(|remark| remark.row == row)
+        .filter(|remark| remark.code == code && !remark.detail.is_none());
+    let mut details: Vec<String> = Vec::new();
+    for detail in of_code.map(|remark| remark.detail.to_string()) {
+        if !details.contains(&detail) {
+            details.push(detail);
+        }
+    }
+    match details.is_empty() {
+        true => String::new(),
+        false => format!(" ({})", details.join("; ")),
     }
 }
 

@@ -137,6 +137,16 @@ fn a_null_is_a_null_in_every_format() {
     assert_eq!(csv.lines().nth(1), Some("-0.001,,blueshift"));
 }
 
+/// A terminal gets what makes a remark exact, as JSON does.
+#[test]
+fn a_terminal_is_told_the_details_of_a_remark() {
+    let target = "/v1/convert?angular_diameter_distance=1e5&to=redshift";
+    let detail = get(target).json()["remarks"][0]["detail"].clone();
+    let detail = detail.as_str().unwrap();
+    let lines = get(&format!("{target}&format=text")).text();
+    assert!(lines.contains(&format!("({detail})")), "{lines}");
+}
+
 /// The layer that packs answers refuses by itself; nothing of the refused answer is left on it.
 #[test]
 fn a_coding_that_can_not_be_had_is_a_problem_without_a_tag() {
