@@ -137,7 +137,7 @@ mod tests {
         for (quantity, text, words) in [
             ("age", "Gyrs", "did you mean \"Gyr\"?"),
             ("comoving_distance", "Gly", "write Glyr"),
-            ("comoving_distance", "mpc", "did you mean \"Mpc\"?"),
+            ("comoving_distance", "MPC", "did you mean \"Mpc\"?"),
             ("comoving_distance", "Mpc/h", "the unit Mpc and per_h"),
             ("comoving_volume", "Gpc3", "write Gpc**3"),
             ("comoving_volume", "Gpc^3", "write Gpc**3"),
