@@ -3,7 +3,7 @@
 use std::ops::Range;
 
 use super::History;
-use super::panels::{Panel, Powers, Sums, polynomial, polynomials};
+use super::panels::{LANES, Panel, Powers, Sums, polynomial, polynomials};
 use crate::numerics::two_sum;
 
 /// Which columns of [`Epochs`] are asked for.
@@ -138,17 +138,17 @@ impl History {
     pub fn epochs(&self, redshifts: &[f64], wanted: Wanted, out: &mut Epochs) {
         out.resize(redshifts.len(), wanted);
         let mut start = 0;
-        for block in redshifts.chunks(8) {
-            let mut eight = [0.0; 8];
-            eight[..block.len()].copy_from_slice(block);
-            self.eight_epochs(&eight, start..start + block.len(), wanted, out);
+        for block in redshifts.chunks(LANES) {
+            let mut lanes = [0.0; LANES];
+            lanes[..block.len()].copy_from_slice(block);
+            self.lanes(&lanes, start..start + block.len(), wanted, out);
             start += block.len();
         }
     }
 
-    /// The panels of eight redshifts with the local coordinates there.
+    /// The panels of the redshifts with the local coordinates there.
     #[inline]
-    fn eight_coordinates(&self, redshifts: &[f64; 8]) -> ([&Panel; 8], [f64; 8]) {
+    fn coordinates(&self, redshifts: &[f64; LANES]) -> ([&Panel; LANES], [f64; LANES]) {
         let panels = redshifts.map(|redshift| self.panels.panel(redshift));
         let turns = self.domain.turns();
         let u = std::array::from_fn(|lane| {
@@ -162,14 +162,14 @@ impl History {
     }
 
     #[inline]
-    fn eight_epochs(
+    fn lanes(
         &self,
-        redshifts: &[f64; 8],
+        redshifts: &[f64; LANES],
         rows: Range<usize>,
         wanted: Wanted,
         out: &mut Epochs,
     ) {
-        let (panels, u) = self.eight_coordinates(redshifts);
+        let (panels, u) = self.coordinates(redshifts);
         if wanted.comoving || wanted.comoving_rest || wanted.conformal {
             let distance = integral(panels.map(|panel| &panel.distance), &u);
             let base = |lane: usize| &panels[lane].at_centre;
@@ -220,7 +220,7 @@ impl Epochs {
     }
 }
 
-/// Fills up to eight rows of a column.
+/// Fills the rows of one column.
 #[inline]
 fn fill(column: &mut [f64], wanted: bool, rows: &Range<usize>, lane: impl Fn(usize) -> f64) {
     if !wanted {
@@ -229,16 +229,16 @@ fn fill(column: &mut [f64], wanted: bool, rows: &Range<usize>, lane: impl Fn(usi
     let Some(cells) = column.get_mut(rows.clone()) else {
         return;
     };
-    for (number, cell) in cells.iter_mut().enumerate().take(8) {
+    for (number, cell) in cells.iter_mut().enumerate().take(LANES) {
         *cell = lane(number);
     }
 }
 
-/// u · Σ `powers[k]` uᵏ on eight panels.
+/// u · Σ `powers[k]` uᵏ on one panel a lane.
 #[inline]
-fn integral(powers: [&Powers; 8], u: &[f64; 8]) -> [f64; 8] {
+fn integral(powers: [&Powers; LANES], u: &[f64; LANES]) -> [f64; LANES] {
     let mut integral = polynomials(powers, u);
-    for lane in 0..8 {
+    for lane in 0..LANES {
         integral[lane] *= u[lane];
     }
     integral

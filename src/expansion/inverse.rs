@@ -1,7 +1,7 @@
 //! From distance or time back to redshift.
 
 use super::History;
-use super::panels::{Panel, Powers, polynomials};
+use super::panels::{LANES, Panel, Powers, polynomials};
 use crate::numerics::LARGEST_NODES;
 
 /// The integrals of a history that grow or fall steadily with redshift.
@@ -34,10 +34,10 @@ impl History {
     /// the curve is infinite.
     pub fn invert(&self, curve: Curve, values: &[f64], redshifts: &mut Vec<f64>) {
         redshifts.resize(values.len(), 0.0);
-        for (values, redshifts) in values.chunks(8).zip(redshifts.chunks_mut(8)) {
-            let mut eight = [f64::NAN; 8];
-            eight[..values.len()].copy_from_slice(values);
-            let found = self.invert_eight(curve, &eight);
+        for (values, redshifts) in values.chunks(LANES).zip(redshifts.chunks_mut(LANES)) {
+            let mut lanes = [f64::NAN; LANES];
+            lanes[..values.len()].copy_from_slice(values);
+            let found = self.invert_lanes(curve, &lanes);
             redshifts.copy_from_slice(&found[..redshifts.len()]);
         }
     }
@@ -61,13 +61,13 @@ impl History {
         }
     }
 
-    fn invert_eight(&self, curve: Curve, values: &[f64; 8]) -> [f64; 8] {
-        let starts: [Start; 8] = std::array::from_fn(|lane| self.start(curve, values[lane]));
-        let powers: [&Powers; 8] = std::array::from_fn(|lane| curve.powers(starts[lane].panel));
-        let mut u: [f64; 8] = std::array::from_fn(|lane| starts[lane].u);
+    fn invert_lanes(&self, curve: Curve, values: &[f64; LANES]) -> [f64; LANES] {
+        let starts: [Start; LANES] = std::array::from_fn(|lane| self.start(curve, values[lane]));
+        let powers: [&Powers; LANES] = std::array::from_fn(|lane| curve.powers(starts[lane].panel));
+        let mut u: [f64; LANES] = std::array::from_fn(|lane| starts[lane].u);
         for _ in 0..STEPS {
             let (integral, slope) = integrals(powers, &u);
-            for lane in 0..8 {
+            for lane in 0..LANES {
                 let start = &starts[lane];
                 let next = u[lane] - (integral[lane] - start.goal) / slope[lane];
                 u[lane] = next.max(start.low).min(start.high);
@@ -149,18 +149,18 @@ impl Curve {
     }
 }
 
-/// u · Σ `powers[k]` uᵏ with its derivative, eight lanes at once.
-fn integrals(powers: [&Powers; 8], u: &[f64; 8]) -> ([f64; 8], [f64; 8]) {
+/// u · Σ `powers[k]` uᵏ with its derivative, all lanes at once.
+fn integrals(powers: [&Powers; LANES], u: &[f64; LANES]) -> ([f64; LANES], [f64; LANES]) {
     let value = polynomials(powers, u);
-    let mut slope = [0.0; 8];
+    let mut slope = [0.0; LANES];
     for k in (0..LARGEST_NODES).rev() {
         let weight = (k + 1) as f64;
-        for lane in 0..8 {
+        for lane in 0..LANES {
             slope[lane] = slope[lane] * u[lane] + weight * powers[lane][k];
         }
     }
-    let mut integral = [0.0; 8];
-    for lane in 0..8 {
+    let mut integral = [0.0; LANES];
+    for lane in 0..LANES {
         integral[lane] = u[lane] * value[lane];
     }
     (integral, slope)

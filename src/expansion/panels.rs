@@ -18,6 +18,10 @@ pub(super) const HALF_OCTAVES: usize = 2 * (HIGHEST_OCTAVE - LOWEST_OCTAVE) as u
 /// The leading bits of the double 2⁻⁷: exponent and first bit of the mantissa.
 const FIRST_KEY: u64 = ((1023 + LOWEST_OCTAVE) as u64) << 1;
 
+/// Values evaluated together, so that one's multiplication need not wait for
+/// another's sum; more of them would not fit the registers.
+pub(super) const LANES: usize = 8;
+
 /// Coefficients of one polynomial on a panel.
 pub(super) type Powers = [f64; LARGEST_NODES];
 
@@ -177,12 +181,12 @@ pub(super) fn polynomial(powers: &Powers, u: f64) -> f64 {
     powers.iter().rev().fold(0.0, |sum, power| sum * u + power)
 }
 
-/// Eight polynomials at once, each lane with the very operations of [`polynomial`].
+/// A polynomial a lane, each lane with the very operations of [`polynomial`].
 #[inline]
-pub(super) fn polynomials(powers: [&Powers; 8], u: &[f64; 8]) -> [f64; 8] {
-    let mut sums = [0.0; 8];
+pub(super) fn polynomials(powers: [&Powers; LANES], u: &[f64; LANES]) -> [f64; LANES] {
+    let mut sums = [0.0; LANES];
     for k in (0..LARGEST_NODES).rev() {
-        for lane in 0..8 {
+        for lane in 0..LANES {
             sums[lane] = sums[lane] * u[lane] + powers[lane][k];
         }
     }

@@ -28,6 +28,8 @@ pub(super) struct Rows<'a, 'b> {
     outputs: Vec<Target>,
     source: Scale,
     wanted: Wanted,
+    /// Whether the values are redshifts already.
+    given_as_redshift: bool,
     given: Vec<f64>,
     solution: Solution,
     epochs: Epochs,
@@ -74,6 +76,7 @@ impl<'a, 'b> Rows<'a, 'b> {
             wanted: frame.wanted(outputs.iter().fold(Wanted::default(), wanted)),
             outputs,
             source,
+            given_as_redshift: inverter.is_redshift() && source == Scale::IDENTITY,
             given: Vec::new(),
             solution: Solution::default(),
             epochs: Epochs::default(),
@@ -84,14 +87,18 @@ impl<'a, 'b> Rows<'a, 'b> {
 
     /// Fills the rows of a block in every column, for one branch.
     pub(super) fn evaluate(&mut self, values: &[f64], place: Place, tables: &mut [Vec<Vec<f64>>]) {
-        self.given.clear();
-        self.given.extend_from_slice(values);
-        self.source.apply_all(&mut self.given);
-        self.inverter
-            .solve(&self.given, place.branch, &mut self.solution);
         self.standings.clear();
-        if !self.verdict.all_usual(&self.solution.redshifts) {
-            self.sort_out(values, place);
+        if self.given_as_redshift && self.verdict.all_usual(values) {
+            self.solution.take(values);
+        } else {
+            self.given.clear();
+            self.given.extend_from_slice(values);
+            self.source.apply_all(&mut self.given);
+            self.inverter
+                .solve(&self.given, place.branch, &mut self.solution);
+            if !self.verdict.all_usual(&self.solution.redshifts) {
+                self.sort_out(values, place);
+            }
         }
         self.frame
             .history
@@ -141,7 +148,7 @@ impl<'a, 'b> Rows<'a, 'b> {
             epochs: &self.epochs,
         };
         (target.quantity.forward.fill)(&block, &self.frame, cells);
-        if !self.standings.is_empty() || !cells.iter().all(|cell| cell.is_finite()) {
+        if !self.standings.is_empty() || !all_finite(cells) {
             self.leave_out(number, target.quantity, cells, place);
         }
         if let Some(condition) = target.condition {
@@ -159,7 +166,22 @@ impl<'a, 'b> Rows<'a, 'b> {
                 }
             }
         }
-        target.scale.apply_all(cells);
+        if target.scale != Scale::IDENTITY {
+            target.scale.apply_all(cells);
+            self.leave_out_overflow(number, cells, place);
+        }
+    }
+
+    /// Empties the cells whose value is too large for a number in the unit asked for.
+    fn leave_out_overflow(&mut self, number: usize, cells: &mut [f64], place: Place) {
+        for (row, cell) in cells.iter_mut().enumerate() {
+            if cell.is_infinite() {
+                *cell = f64::NAN;
+                let code = Code::NotFinite;
+                self.remarks
+                    .push(remark(place, row, Some(number), code, Detail::None));
+            }
+        }
     }
 
     /// Empties the cells that have no value, and says why where the row does not.
@@ -238,6 +260,13 @@ impl<'a, 'b> Rows<'a, 'b> {
             }
         }
     }
+}
+
+/// Whether every cell is finite; without an early end, so that it is done in lanes.
+fn all_finite(cells: &[f64]) -> bool {
+    cells
+        .iter()
+        .fold(true, |finite, cell| finite & cell.is_finite())
 }
 
 fn remark(place: Place, row: usize, column: Option<usize>, code: Code, detail: Detail) -> Remark {

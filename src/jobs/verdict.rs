@@ -48,7 +48,11 @@ impl<'a, 'b> Verdict<'a, 'b> {
 
     /// Whether there is nothing to be said about a block.
     pub(super) fn all_usual(&self, redshifts: &[f64]) -> bool {
-        redshifts.iter().all(|z| *z >= 0.0 && *z <= self.quiet)
+        let quiet = self.quiet;
+        // Without an early end, so that it is done in lanes.
+        redshifts
+            .iter()
+            .fold(true, |usual, z| usual & (*z >= 0.0) & (*z <= quiet))
     }
 
     /// How a row stands, with what is to be said: `value` as it came, `given` in

@@ -31,6 +31,15 @@ pub struct Solution {
     scaled: Vec<f64>,
 }
 
+impl Solution {
+    /// Takes redshifts as they are; none is suspect.
+    pub fn take(&mut self, redshifts: &[f64]) {
+        self.suspect.clear();
+        self.redshifts.clear();
+        self.redshifts.extend_from_slice(redshifts);
+    }
+}
+
 impl<'a> Inverter<'a> {
     /// Prepares the inverse for many values; `None` for quantities that have none.
     ///
@@ -82,6 +91,12 @@ impl<'a> Inverter<'a> {
                 ..unsettled
             }
         })
+    }
+
+    /// Whether what is given is the redshift itself.
+    #[must_use]
+    pub fn is_redshift(&self) -> bool {
+        self.quantity.name == "redshift"
     }
 
     /// The quantity that is given.
@@ -181,7 +196,7 @@ impl<'a> Inverter<'a> {
     /// rounding belong to it; redshifts themselves are exact. A negative distance
     /// belongs nowhere.
     fn settle_ends(&self, values: &[f64], redshifts: &mut [f64]) {
-        if self.quantity.name == "redshift" {
+        if self.is_redshift() {
             return;
         }
         let (lowest, highest) = self.frame.history.range();

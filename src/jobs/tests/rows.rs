@@ -191,3 +191,20 @@ fn what_the_model_lacks_is_said() {
     ));
     assert!(matches!(refused, Err(ConvertFault::Undefined { .. })));
 }
+
+#[test]
+fn a_value_too_large_for_its_unit_is_said() {
+    let history = plain(0.3, 0.0);
+    let redshifts = [1.0, f64::NAN];
+    let mut conversion = conversion(
+        &history,
+        source("redshift", &redshifts),
+        &["age", "comoving_distance"],
+    );
+    conversion.to[1].per_sound_horizon = Some(1e-310);
+    let converted = convert(&conversion).unwrap();
+    assert!(converted.columns[1].values[0].is_nan());
+    assert!(converted.columns[0].values[0].is_finite());
+    assert_eq!(codes(&converted, 0), ["not_finite"]);
+    assert_eq!(codes(&converted, 1), ["missing"]);
+}
