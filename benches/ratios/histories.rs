@@ -82,12 +82,15 @@ pub(crate) fn building(rounds: usize) {
     }
 }
 
+/// Something to do with tables and redshifts.
+type Job = Box<dyn Fn(&History, &[f64]) + Send + Sync>;
+
 /// Compares the reading of tables with a logarithm over the same array.
 pub(crate) fn evaluation(rounds: usize) {
     let history = Arc::new(History::build(&spec(&[0.06])).expect("a usual model"));
     let redshifts: Arc<Vec<f64>> = Arc::new(spread(VALUES));
     let worker = Worker::new();
-    let timed = |job: Box<dyn Fn(&History, &[f64]) + Send + Sync>| {
+    let timed = |job: Job| {
         let (history, redshifts, worker, job) = (
             Arc::clone(&history),
             Arc::clone(&redshifts),

@@ -37,7 +37,7 @@ impl Service {
                 .filter(|line| line.starts_with("curl "))
                 .count();
             let quotes: usize = lines.iter().map(|line| line.matches('\'').count()).sum();
-            commands == 3 && quotes % 2 == 0
+            commands == 3 && quotes.is_multiple_of(2)
         };
         while !complete(&greeting) {
             greeting.push(
