@@ -38,6 +38,12 @@ impl<'q> Query<'q> {
         Ok(Query { pairs })
     }
 
+    /// The value of the parameter of this name.
+    pub fn value(&self, name: &str) -> Option<&str> {
+        let pair = self.pairs.iter().find(|(key, _)| key == name)?;
+        Some(&pair.1)
+    }
+
     /// Takes the parameter of this name out.
     pub fn take(&mut self, name: &str) -> Option<Cow<'q, str>> {
         let index = self.pairs.iter().position(|(key, _)| key == name)?;

@@ -109,7 +109,12 @@ impl Model {
     /// `wrong_type` for what is no number, `missing_field`, `malformed_query` for both at once.
     pub fn of_query(query: &mut Query<'_>) -> Result<Option<Model>, Fault> {
         let name = query.take("model");
-        let is_member = |key: &str| MEMBERS.iter().any(|member| member == key);
+        let form = query.value("dark_energy.form");
+        // A form that does not exist may have any member: the form is what is wrong then.
+        let strange = form.is_some_and(|form| !is_form(form));
+        let is_member = |key: &str| {
+            MEMBERS.iter().any(|member| member == key) || strange && key.starts_with("dark_energy.")
+        };
         let members: Vec<_> = std::iter::from_fn(|| query.take_any(is_member)).collect();
         match (name, members.first()) {
             (None, None) => Ok(None),
@@ -125,6 +130,10 @@ impl Model {
             }
         }
     }
+}
+
+fn is_form(name: &str) -> bool {
+    DARK_ENERGY_FORMS.iter().any(|form| form.name == name)
 }
 
 /// The members of a query as the object they stand for.
@@ -196,9 +205,8 @@ impl<'de> Visitor<'de> for DarkEnergyVisitor {
             }
         }
         let form = form.ok_or_else(|| A::Error::missing_field("form"))?;
-        // A form that does not exist may have any member: the form is what is wrong then.
-        let is_form = DARK_ENERGY_FORMS.iter().any(|known| known.name == form);
-        if let (true, Some(strange)) = (is_form, strange) {
+        // As in a query: the members of a form that does not exist are not what is wrong.
+        if let (true, Some(strange)) = (is_form(&form), strange) {
             return Err(A::Error::unknown_field(&strange, &DARK_ENERGY_MEMBERS));
         }
         Ok(DeclaredDarkEnergy {

@@ -110,6 +110,9 @@ fn an_unknown_form_is_named_before_its_members() {
         text(&fault, "allowed").contains("cosmological_constant"),
         "{fault}"
     );
+    let query = "redshift=1&hubble_constant=70&matter=0.3&dark_energy.form=w0wa&dark_energy.w0=-1";
+    let queried = self::fault(&get(&format!("/v1/convert?{query}")));
+    assert_eq!(queried["parameter"], "dark_energy.form", "{queried}");
     let fault = refused(r#"{"form": "constant", "w0": -1}"#);
     assert_eq!(fault["pointer"], "/model/dark_energy/w0", "{fault}");
     let fault = refused(r#"{"w": -1}"#);
