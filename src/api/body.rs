@@ -79,9 +79,14 @@ async fn collect(mut body: Body, declared: usize, limit: usize) -> Result<Bytes,
             continue;
         }
         if whole.is_empty() {
-            whole.reserve_exact(declared.clamp(first.len() + data.len(), limit));
             whole.extend_from_slice(&first);
             first = Bytes::new();
+        }
+        let come = whole.len() + data.len();
+        if come > whole.capacity() {
+            // Room for what is declared, but never for much more than has come.
+            let wanted = declared.min(4 * come).max(come);
+            whole.reserve_exact(wanted - whole.len());
         }
         whole.extend_from_slice(&data);
     }

@@ -55,6 +55,11 @@ pub(super) fn explained(response: Response) -> Response {
     }
     let (code, detail) = match status.as_u16() {
         404 => (Code::NotFound, "there is nothing at this address"),
+        // The framework's only own 400: a path that is not UTF-8.
+        400 => (
+            Code::NotFound,
+            "the path is not UTF-8, so there is nothing at this address",
+        ),
         405 => (
             Code::MethodNotAllowed,
             "this route does not know the method; see the header Allow",

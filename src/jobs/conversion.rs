@@ -126,6 +126,14 @@ pub enum ConvertFault {
 }
 
 impl<'a> Conversion<'a> {
+    /// How many branches the given quantity has in this model.
+    #[must_use]
+    pub fn branches(&self) -> usize {
+        let frame = Frame::of(self.history);
+        let inverter = Inverter::prepare(&frame, self.from.quantity, self.future);
+        inverter.map_or(0, |inverter| inverter.branches().len())
+    }
+
     /// The inverse of the given quantity, if everything asked for can be answered.
     pub(super) fn check(&self, frame: &Frame<'a>) -> Result<Inverter<'a>, ConvertFault> {
         let quantity = self.from.quantity;

@@ -26,9 +26,11 @@ impl<'q> Query<'q> {
         for part in parts {
             let Some((key, value)) = part.split_once('=') else {
                 let detail = "a query parameter has the form name=value";
-                return Err(Fault::new(Code::MalformedQuery, detail).value(part));
+                return Err(Fault::new(Code::MalformedQuery, detail).parameter(cut(part)));
             };
-            let (key, value) = (decoded(key)?, decoded(value)?);
+            let value = decoded(value).map_err(|fault| fault.parameter(cut(key)));
+            let key = decoded(key).map_err(|fault| fault.parameter(cut(key)))?;
+            let value = value?;
             if pairs.iter().any(|(earlier, _)| *earlier == key) {
                 let detail = format!("the query parameter \"{}\" is there twice", cut(&key));
                 return Err(Fault::new(Code::DuplicateField, detail).parameter(cut(&key)));

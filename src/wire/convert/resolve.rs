@@ -18,6 +18,7 @@ use crate::tables::Given;
 pub struct Asked {
     /// The model as written; absent for the default.
     pub model: Option<Model>,
+    size: Size,
     /// The given column.
     pub from: Given,
     branch: jobs::Branch,
@@ -93,6 +94,7 @@ impl ConvertRequest {
         match from {
             Ok(from) if faults.is_empty() => Ok(Asked {
                 model: self.model,
+                size,
                 from,
                 branch,
                 to,
@@ -112,7 +114,7 @@ impl Size {
             )
         } else if rows.saturating_mul(outputs) > self.results {
             format!(
-                "{rows} values times {outputs} outputs are more than the {} results of a request",
+                "{rows} values times {outputs} columns are more than the {} results of a request",
                 self.results
             )
         } else {
@@ -129,7 +131,8 @@ impl Asked {
     /// The job, for a model's history and its printed values.
     ///
     /// # Errors
-    /// `undefined_in_model` if the model has no sound horizon.
+    /// `undefined_in_model` if the model has no sound horizon, `too_many_values` if all branches
+    /// together are too many.
     pub fn conversion<'a>(
         &'a self,
         history: &'a History,
@@ -154,12 +157,19 @@ impl Asked {
                 quantities.filter(defined).map(Output::plain).collect()
             }
         };
-        Ok(Conversion {
+        let conversion = Conversion {
             history,
             from,
             to,
             future: self.future,
-        })
+        };
+        if self.branch == jobs::Branch::All {
+            let columns = conversion.to.len().saturating_mul(conversion.branches());
+            if let Some(fault) = self.size.fault(self.from.values.len(), columns) {
+                return Err(fault);
+            }
+        }
+        Ok(conversion)
     }
 
     /// How many values will be computed, about.

@@ -29,8 +29,17 @@ impl Reader<'_, '_> {
             }
             Ok((_, length)) if is_number => Err(self.not_finite(length)),
             _ => {
+                let expected = match unsigned {
+                    [b'0', b'0'..=b'9', ..] => "a number without a leading zero",
+                    [b'0'..=b'9', ..] => {
+                        // The point is there, its digits are not.
+                        self.at += whole + 1;
+                        "a digit after the point"
+                    }
+                    _ => "a digit",
+                };
                 self.at += token.len() - unsigned.len();
-                Err(self.unexpected("a digit"))
+                Err(self.unexpected(expected))
             }
         }
     }
