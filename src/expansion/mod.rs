@@ -11,7 +11,7 @@ mod history;
 mod inverse;
 mod panels;
 pub mod quadrature;
-mod tail;
+pub mod tail;
 mod turning;
 
 #[cfg(test)]

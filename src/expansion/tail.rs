@@ -28,7 +28,10 @@ pub(super) fn comoving(densities: &Densities, stretch: f64) -> f64 {
     to_infinity(stretch, |v| 1.0 / densities.rate(v))
 }
 
-fn to_infinity(stretch: f64, integrand: impl Fn(f64) -> f64) -> f64 {
+/// ∫_v^∞ of an integrand that has become a power of v, falling faster than 1/v,
+/// before v grows by 2²⁰⁰.
+#[must_use]
+pub fn to_infinity(stretch: f64, integrand: impl Fn(f64) -> f64) -> f64 {
     let mut sum = 0.0;
     let mut from = stretch;
     let mut previous = [f64::NAN; 2];

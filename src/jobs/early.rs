@@ -2,6 +2,7 @@
 
 use super::description::{Early, EarlyEpoch, Scalar};
 use crate::expansion::History;
+use crate::expansion::tail::to_infinity;
 use crate::model::{Citation, Printed};
 use crate::numerics::gauss_legendre_16;
 
@@ -49,7 +50,13 @@ fn sound_horizon_mpc(history: &History, redshift: f64) -> Option<f64> {
     let loading = 0.75 * baryons / photons;
     let densities = history.densities();
     let slowness = |v: f64| 1.0 / (densities.rate(v) * (1.0 + loading / v).sqrt());
-    let top = 1.0 + history.range().1;
+    // A bounce is no beginning.
+    history.conformal_time_today()?;
+    // Above, R is small and its change no power law of its own.
+    let top = (1.0 + history.range().1).max(1e3 * loading);
+    if !densities.rate(top).is_finite() {
+        return None;
+    }
     let mut low = 1.0 + redshift;
     let mut sum = 0.0;
     while low < top {
@@ -57,9 +64,8 @@ fn sound_horizon_mpc(history: &History, redshift: f64) -> Option<f64> {
         sum += gauss_legendre_16(low, high, slowness);
         low = high;
     }
-    // Above, E ∝ v² and R is small: ∫ (1 − R/2) dv/E.
-    let rest = history.epoch(history.range().1).conformal * (1.0 - 0.25 * loading / top);
-    let horizon = history.hubble_distance_mpc() / 3.0_f64.sqrt() * (sum + rest);
+    let whole = sum + to_infinity(top, slowness);
+    let horizon = history.hubble_distance_mpc() / 3.0_f64.sqrt() * whole;
     Some(horizon).filter(|horizon| horizon.is_finite())
 }
 
@@ -75,10 +81,17 @@ pub(super) fn early(history: &History, printed: PrintedEpochs) -> Early {
         }
         Err(reason) => Scalar::none(unit, reason),
     };
-    let decoupling = format!("fit of {HU_SUGIYAMA}; within 0.2 % of detailed recombination");
-    let drag = format!("fit of {AIZPURU}; within 5e-5 of four printed values");
-    let historical =
-        format!("fit of {EISENSTEIN_HU}; historical, 4 % below detailed recombination");
+    let usual = composition.as_ref().is_ok_and(Composition::is_usual);
+    let named = |citation: &Citation, error: &str| {
+        let error = if usual { error } else { UNUSUAL };
+        format!("fit of {citation}; {error}")
+    };
+    let decoupling = named(&HU_SUGIYAMA, "within 0.2 % of detailed recombination");
+    let drag = named(&AIZPURU, "within 5e-5 of four printed values");
+    let historical = named(
+        &EISENSTEIN_HU,
+        "historical, 4 % below detailed recombination",
+    );
     let decoupling = fit(Composition::decoupling_redshift, "1", decoupling);
     let drag = fit(Composition::drag_redshift, "1", drag);
     Early {
@@ -87,7 +100,11 @@ pub(super) fn early(history: &History, printed: PrintedEpochs) -> Early {
         sound_horizon_fit: fit(
             Composition::sound_horizon_mpc,
             "Mpc",
-            format!("fit of {AUBOURG}"),
+            if usual {
+                format!("fit of {AUBOURG}")
+            } else {
+                named(&AUBOURG, UNUSUAL)
+            },
         ),
         drag_redshift_historical: fit(Composition::historical_drag_redshift, "1", historical),
     }
@@ -111,6 +128,9 @@ fn epoch(history: &History, printed: Option<f64>, fit: Scalar) -> EarlyEpoch {
         redshift,
     }
 }
+
+/// What is said of a fit outside the densities it was made for.
+const UNUSUAL: &str = "its error is not known here, outside 0.0025 <= omega_b <= 0.25, 0.025 <= omega_m <= 0.64, 2.7 K <= T0 <= 2.75 K";
 
 const HU_SUGIYAMA: Citation = Citation {
     authors: "Hu & Sugiyama",
@@ -142,6 +162,7 @@ struct Composition {
     baryons: f64,
     matter: f64,
     massive_neutrinos: f64,
+    cmb_temperature: f64,
 }
 
 impl Composition {
@@ -160,7 +181,16 @@ impl Composition {
             baryons: baryons * square,
             matter: spec.matter * square,
             massive_neutrinos: massive_neutrinos * square,
+            cmb_temperature: spec.radiation.map_or(0.0, |one| one.cmb_temperature),
         })
+    }
+
+    /// Whether the fits were made for such densities: the range of Hu & Sugiyama
+    /// 1996, appendix E (from memory), around the measured temperature.
+    fn is_usual(&self) -> bool {
+        (0.0025..=0.25).contains(&self.baryons)
+            && (0.025..=0.64).contains(&self.matter)
+            && (2.7..=2.75).contains(&self.cmb_temperature)
     }
 
     fn decoupling_redshift(&self) -> f64 {
@@ -201,6 +231,7 @@ mod tests {
         baryons: 0.02237,
         matter: 0.1430,
         massive_neutrinos: 0.000_645,
+        cmb_temperature: 2.7255,
     };
 
     #[test]
@@ -209,5 +240,61 @@ mod tests {
         assert!((PLANCK_2018.decoupling_redshift() / 1089.92 - 1.0).abs() < 2.5e-3);
         assert!((PLANCK_2018.sound_horizon_mpc() / 147.09 - 1.0).abs() < 5e-4);
         assert!((PLANCK_2018.historical_drag_redshift() - 1020.7).abs() < 0.1);
+    }
+
+    #[test]
+    fn cold_photons_are_loaded_far_beyond_the_tables() {
+        // In the limit of matter and baryons alone, and by the closed form of
+        // Eisenstein & Hu 1998, eq. 6, which knows no massive neutrinos.
+        for temperature in [0.01, 0.05, 0.1, 1.0, 2.7255] {
+            let spec = crate::model::Declaration {
+                hubble_constant: 70.0,
+                matter: 0.3,
+                baryons: Some(0.05),
+                radiation: Some(crate::model::RadiationDeclaration {
+                    cmb_temperature: Some(temperature),
+                    effective_neutrino_number: Some(3.0),
+                    neutrino_masses: Vec::new(),
+                }),
+                ..crate::model::Declaration::default()
+            }
+            .close()
+            .unwrap();
+            let history = History::build(&spec).unwrap();
+            let redshift = 1e5;
+            let loading = 0.75 * 0.05 / spec.photons();
+            let radiation = spec.photons() + spec.massless_neutrinos();
+            let equality = spec.matter / radiation;
+            let (r, r_eq) = (loading / (1.0 + redshift), loading / equality);
+            // With v = 1 + z and E² = Ω_m v³ (1 + v/v_eq), eq. 6 in our symbols.
+            let ln = libm::log(((1.0 + r).sqrt() + (r + r_eq).sqrt()) / (1.0 + r_eq.sqrt()));
+            let expected =
+                history.hubble_distance_mpc() * 2.0 / (3.0 * spec.matter * loading).sqrt() * ln;
+            let found = sound_horizon_mpc(&history, redshift).unwrap();
+            assert!(
+                (found / expected - 1.0).abs() < 1e-9,
+                "{temperature}: {found} {expected}"
+            );
+        }
+    }
+
+    #[test]
+    fn outside_their_range_fits_state_no_error() {
+        let spec = crate::model::Declaration {
+            hubble_constant: 70.0,
+            matter: 1e-5,
+            baryons: Some(1e-6),
+            radiation: Some(crate::model::RadiationDeclaration {
+                cmb_temperature: Some(2.7),
+                effective_neutrino_number: Some(3.0),
+                neutrino_masses: Vec::new(),
+            }),
+            ..crate::model::Declaration::default()
+        }
+        .close()
+        .unwrap();
+        let early = early(&History::build(&spec).unwrap(), PrintedEpochs::default());
+        let source = early.decoupling.redshift.source.unwrap();
+        assert!(source.contains("not known"), "{source}");
     }
 }
