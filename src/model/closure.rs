@@ -30,6 +30,12 @@ impl Declaration {
         if !faults.is_empty() {
             return Err(faults);
         }
+        if spec.dark_energy.density == 0.0 {
+            // Without dark energy curvature closes, as an echo will declare it.
+            let fixed = filled(&spec);
+            let found = closing(&fixed, 0.0);
+            spec.curvature = settled(spec.curvature, found, &fixed, 0.0);
+        }
         simplify(&mut spec.dark_energy);
         Ok(spec)
     }
@@ -97,7 +103,7 @@ fn parts_exceed_matter(spec: &Spec) -> Option<ModelFault> {
 /// Fills in curvature and density by the rule, or says why it cannot.
 fn balance(curvature: Option<f64>, density: Option<f64>, spec: &mut Spec) -> Option<ModelFault> {
     let absent = spec.dark_energy.form.absent;
-    let fixed = [spec.matter, spec.photons(), spec.massless_neutrinos()];
+    let fixed = filled(spec);
     match (curvature, density) {
         (Some(curvature), Some(density)) if !absent => {
             spec.curvature = curvature;
@@ -128,6 +134,11 @@ fn balance(curvature: Option<f64>, density: Option<f64>, spec: &mut Spec) -> Opt
             impossible(&DARK_ENERGY_DENSITY, spec.dark_energy.density, spec)
         }
     }
+}
+
+/// What does not close.
+fn filled(spec: &Spec) -> [f64; 3] {
+    [spec.matter, spec.photons(), spec.massless_neutrinos()]
 }
 
 /// 1 less the terms; exactly 0 where that is below 8 ulp of Σ|terms|, so that

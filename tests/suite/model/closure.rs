@@ -156,3 +156,33 @@ fn baryons_are_part_of_matter() {
     assert_eq!(spec.baryons, Some(0.3));
     assert_eq!(spec.dark_energy.density, 0.7);
 }
+
+#[test]
+fn an_echo_declares_the_same_model_where_rounding_closes() {
+    for (matter, curvature) in [
+        (1.0, 1e-17),
+        (1.0, -1e-17),
+        (0.3, 0.7),
+        (0.3, 0.700_000_000_000_000_1),
+    ] {
+        let declaration = Declaration {
+            curvature: Some(curvature),
+            ..plain(70.0, matter)
+        };
+        let spec = declaration.close().unwrap();
+        let echo = Declaration {
+            curvature: Some(spec.curvature),
+            dark_energy: dark_energy(
+                spec.dark_energy.form.name,
+                Some(spec.dark_energy.density),
+                &[],
+            ),
+            ..plain(70.0, matter)
+        };
+        assert_eq!(
+            echo.close().unwrap().canonical_bytes(),
+            spec.canonical_bytes(),
+            "{matter} {curvature}"
+        );
+    }
+}
