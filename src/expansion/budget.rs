@@ -31,7 +31,8 @@ impl Densities {
     /// Shares of the critical density, w and q at a redshift.
     ///
     /// # Accuracy
-    /// Each share within 2 ulp; q within 4 ulp of its larger term.
+    /// Each share within 2 ulp; q within 4 ulp of its larger term. At a turning
+    /// point all are infinite.
     ///
     /// # References
     /// q = ½ Σ (1 + 3 wᵢ) Ωᵢ: Peebles 1993, Principles of Physical Cosmology, section 13.
@@ -50,7 +51,14 @@ impl Densities {
         let equation_of_state = self.equation_of_state(stretch.hi);
         let active = DoubleDouble::from(1.0) + DoubleDouble::from(equation_of_state) * 3.0;
         let braking = radiation * 2.0 + matter + pressure + dark_energy * active;
-        let share = |term: DoubleDouble| (term / total).value();
+        let share = |term: DoubleDouble| {
+            if total.value() > 0.0 || term.value() == 0.0 {
+                (term / total).value()
+            } else {
+                // At a turning point the rate is zero, and rounding has the sign.
+                term.value() / 0.0
+            }
+        };
         Composition {
             matter: share(matter),
             radiation: share(radiation),

@@ -150,9 +150,9 @@ pub struct Solved {
     pub slope: fn(&Epoch, &Frame) -> f64,
     /// Where it turns.
     pub turning: fn(&Turning) -> &[f64],
-    /// What it tends to, from below, as z → ∞; infinite where it grows for ever.
+    /// What it tends to as z → ∞; infinite where it grows for ever.
     pub horizon: fn(&Frame) -> f64,
-    /// What it tends to as z → −1; infinite where it grows, or where that is no matter.
+    /// What it tends to as z → −1; NaN where it ends before, or where that is no matter.
     pub late_limit: fn(&Frame) -> f64,
     /// Whether values of z < 0 are solved for.
     pub future: bool,

@@ -102,20 +102,29 @@ impl Inverter<'_> {
         let (top, top_turns) = part.top();
         let (bottom, bottom_turns) = part.bottom();
         if given > top.value {
+            if curve.future {
+                let (highest, taken) = self.extreme(curve, true);
+                if given > highest || given >= highest && !taken {
+                    return Miss::BeyondMaximum(highest);
+                }
+                if !top_turns && top.redshift == 0.0 {
+                    return Miss::Blueshift;
+                }
+            }
             let horizon = (curve.horizon)(&self.frame);
             return if top_turns {
                 Miss::BeyondMaximum(self.quantity.at(top.redshift, &self.frame))
-            } else if given >= horizon {
+            } else if given >= horizon && horizon.is_finite() {
                 Miss::BeyondMaximum(f64::NAN)
             } else {
                 self.beyond_early_end()
             };
         }
-        if curve.future
-            && let Some((lowest, taken)) = self.lowest(curve)
-            && (given < lowest || given <= lowest && !taken)
-        {
-            return Miss::BelowMinimum(lowest, taken);
+        if curve.future {
+            let (lowest, taken) = self.extreme(curve, false);
+            if given < lowest || given <= lowest && !taken {
+                return Miss::BelowMinimum(lowest, taken);
+            }
         }
         if bottom_turns || given.is_nan() || given < 0.0 {
             Miss::OutsideDomain
@@ -130,22 +139,34 @@ impl Inverter<'_> {
         }
     }
 
-    /// The smallest value of a curve of past and future, and whether it is taken:
-    /// where it turns, at an end of the history, or as a limit beyond it.
-    fn lowest(&self, curve: &Solved) -> Option<(f64, bool)> {
+    /// The highest or the lowest value of a curve of past and future, and whether
+    /// it is taken: where it turns, at an end of the history, or as a limit beyond.
+    fn extreme(&self, curve: &Solved, highest: bool) -> (f64, bool) {
         let frame = &self.frame;
         let (low, high) = frame.history.range();
         let at = |z: f64| (curve.value)(&frame.history.epoch(z), frame);
+        // Rounding makes no extremum of a constant.
+        let beyond = |one: f64, other: f64| {
+            let difference = if highest { one - other } else { other - one };
+            difference > 8.0 * f64::EPSILON * other
+        };
         let turning = (curve.turning)(frame.history.turning()).iter().copied();
-        let taken = turning
-            .chain([low, 0.0, high])
-            .map(at)
-            .min_by(f64::total_cmp)?;
-        let limit = (curve.late_limit)(frame);
-        Some(if limit < taken {
-            (limit, false)
-        } else {
-            (taken, true)
-        })
+        let values = turning.chain([low, high]).map(at);
+        let taken = values.fold(at(0.0), |extreme, value| {
+            if beyond(value, extreme) {
+                value
+            } else {
+                extreme
+            }
+        });
+        let limits = [(curve.late_limit)(frame), (curve.horizon)(frame)].into_iter();
+        let limit = limits.fold(taken, |extreme, value| {
+            if beyond(value, extreme) {
+                value
+            } else {
+                extreme
+            }
+        });
+        (limit, limit == taken)
     }
 }

@@ -3,6 +3,7 @@
 
 mod back;
 mod described;
+mod reach;
 mod requests;
 mod rows;
 

@@ -208,3 +208,32 @@ fn a_value_too_large_for_its_unit_is_said() {
     assert_eq!(codes(&converted, 0), ["not_finite"]);
     assert_eq!(codes(&converted, 1), ["missing"]);
 }
+
+#[test]
+fn at_a_turning_point_shares_are_infinite() {
+    let none = DarkEnergyDeclaration {
+        form: "none".to_owned(),
+        ..DarkEnergyDeclaration::default()
+    };
+    let history = build(&Declaration {
+        hubble_constant: 70.0,
+        matter: 3.0,
+        dark_energy: Some(none),
+        ..Declaration::default()
+    });
+    let values = [history.turnaround().unwrap()];
+    let names = [
+        "deceleration_parameter",
+        "matter_fraction",
+        "radiation_fraction",
+    ];
+    let request = Conversion {
+        future: true,
+        ..conversion(&history, source("redshift", &values), &names)
+    };
+    let converted = convert(&request).unwrap();
+    for column in &converted.columns {
+        let value = column.values[0];
+        assert!(value.is_nan() || value == 0.0 || value > 1e13, "{value}");
+    }
+}

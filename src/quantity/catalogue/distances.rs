@@ -212,7 +212,7 @@ static TRANSVERSE: Solved = Solved {
     slope: transverse_slope_mpc,
     turning: |turning| &turning.transverse,
     horizon: transverse_horizon_mpc,
-    late_limit: |_| f64::INFINITY,
+    late_limit: |_| f64::NAN,
     future: false,
 };
 
@@ -225,7 +225,7 @@ static ANGULAR_DIAMETER: Solved = Solved {
     },
     turning: |turning| &turning.angular_diameter,
     horizon: |_| f64::INFINITY,
-    late_limit: |_| f64::INFINITY,
+    late_limit: |_| f64::NAN,
     future: false,
 };
 
@@ -237,6 +237,6 @@ static LUMINOSITY: Solved = Solved {
     },
     turning: |turning| &turning.luminosity,
     horizon: |_| f64::INFINITY,
-    late_limit: |_| f64::INFINITY,
+    late_limit: |_| f64::NAN,
     future: false,
 };

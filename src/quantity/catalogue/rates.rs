@@ -1,7 +1,7 @@
 //! The expansion rate, its change, and what it makes drift.
 
 use super::*;
-use crate::expansion::Epoch;
+use crate::expansion::{Beginning, Epoch};
 use crate::model::constants::SPEED_OF_LIGHT_KM_S;
 use crate::quantity::Frame;
 
@@ -176,17 +176,27 @@ static EXPANSION_RATE: Solved = Solved {
         frame.hubble_constant * densities.rate_squared_slope(stretch) / (2.0 * epoch.rate)
     },
     turning: |turning| &turning.rate,
-    horizon: |_| f64::INFINITY,
-    late_limit: |frame| {
-        let densities = frame.history.densities();
-        let exponent = densities.late_exponent();
-        if frame.history.turnaround().is_some() || exponent < 0.0 {
-            f64::INFINITY
-        } else if exponent > 0.0 {
-            0.0
-        } else {
-            frame.hubble_constant * densities.terms(1.0).dark_energy.sqrt()
-        }
+    horizon: |frame| match frame.history.beginning() {
+        Beginning::Bounce { .. } => f64::NAN,
+        _ => limit(frame, frame.history.densities().early_exponent()),
+    },
+    late_limit: |frame| match frame.history.turnaround() {
+        Some(_) => f64::NAN,
+        // Towards z → −1 a falling power grows.
+        None => limit(frame, -frame.history.densities().late_exponent()),
     },
     future: true,
 };
+
+/// What H tends to where E² follows a leading power that grows with this
+/// exponent on the way; only a constant term has the exponent 0.
+fn limit(frame: &Frame, exponent: f64) -> f64 {
+    if exponent > 0.0 {
+        f64::INFINITY
+    } else if exponent < 0.0 {
+        0.0
+    } else {
+        let constant = frame.history.densities().terms(1.0).dark_energy;
+        frame.hubble_constant * constant.sqrt()
+    }
+}

@@ -133,7 +133,7 @@ static VOLUME: Solved = Solved {
             )
         })
     },
-    late_limit: |_| f64::INFINITY,
+    late_limit: |_| f64::NAN,
     future: false,
 };
 
