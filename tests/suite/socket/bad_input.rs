@@ -4,7 +4,7 @@ use super::client::{Answer, ask, get, narrow, post, raw, shared};
 use serde_json::Value;
 use std::io::{Read, Write};
 
-fn refused(answer: &Answer, status: u16, code: &str) -> Value {
+pub(super) fn refused(answer: &Answer, status: u16, code: &str) -> Value {
     let problem = answer.json();
     assert_eq!(
         (answer.status, problem["code"].as_str()),
@@ -14,7 +14,7 @@ fn refused(answer: &Answer, status: u16, code: &str) -> Value {
     problem
 }
 
-fn body(from: &str) -> Answer {
+pub(super) fn body(from: &str) -> Answer {
     post(
         "/v1/convert",
         &format!(r#"{{"from": {{"quantity": "redshift", "values": {from}}}}}"#),
@@ -283,54 +283,5 @@ fn what_is_not_json_is_refused_by_its_type_or_its_bytes() {
         ),
         400,
         "malformed_json",
-    );
-}
-
-#[test]
-fn a_path_that_is_no_text_is_not_found() {
-    for path in ["/v1/models/%ff", "/problems/%F0%28", "/docs/%ff"] {
-        refused(&get(path), 404, "not_found");
-    }
-}
-
-#[test]
-fn a_malformed_query_names_its_parameter() {
-    for (query, parameter) in [("redshift=1&to=%ff", "to"), ("redshift=1&future", "future")] {
-        let problem = refused(
-            &get(&format!("/v1/convert?{query}")),
-            400,
-            "malformed_query",
-        );
-        assert_eq!(problem["errors"][0]["parameter"], parameter);
-    }
-}
-
-#[test]
-fn a_number_that_json_does_not_allow_is_told_from_a_missing_one() {
-    for (values, detail) in [
-        ("[01]", "without a leading zero"),
-        ("[5.]", "a digit after the point"),
-        ("[-]", "a digit"),
-    ] {
-        let problem = refused(&body(values), 400, "malformed_json");
-        let told = problem["detail"].as_str().unwrap();
-        assert!(told.contains(detail), "{told}");
-    }
-}
-
-/// What is declared is not reserved before it comes.
-#[test]
-fn a_body_in_pieces_is_read_whole() {
-    let values = format!("[{}1]", "1,".repeat(200_000 - 1));
-    let text =
-        format!(r#"{{"from": {{"quantity": "redshift", "values": {values}}}, "to": ["age"]}}"#);
-    let answer = post("/v1/convert", &text);
-    assert_eq!(answer.status, 200);
-    assert_eq!(
-        answer.json()["columns"]["age"]["values"]
-            .as_array()
-            .unwrap()
-            .len(),
-        200_000
     );
 }

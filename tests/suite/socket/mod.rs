@@ -7,3 +7,4 @@ mod convert;
 mod hints;
 mod models;
 mod problems;
+mod wording;
