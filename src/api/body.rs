@@ -62,6 +62,9 @@ fn check_type(headers: &HeaderMap) -> Result<(), Fault> {
         .allowed("application/json"))
 }
 
+/// What a body may reserve before it comes.
+const RESERVED_BYTES: usize = 2 * 1024 * 1024;
+
 async fn collect(mut body: Body, declared: usize, limit: usize) -> Result<Bytes, Fault> {
     let mut first = Bytes::new();
     let mut whole: Vec<u8> = Vec::new();
@@ -84,8 +87,8 @@ async fn collect(mut body: Body, declared: usize, limit: usize) -> Result<Bytes,
         }
         let come = whole.len() + data.len();
         if come > whole.capacity() {
-            // Room for what is declared, but never for much more than has come.
-            let wanted = declared.min(4 * come).max(come);
+            // Room for what is declared, but little that has not come.
+            let wanted = declared.min(RESERVED_BYTES.max(2 * come)).max(come);
             whole.reserve_exact(wanted - whole.len());
         }
         whole.extend_from_slice(&data);

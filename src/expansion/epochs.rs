@@ -149,7 +149,8 @@ impl History {
     /// The panels of the redshifts with the local coordinates there.
     #[inline]
     fn coordinates(&self, redshifts: &[f64; LANES]) -> ([&Panel; LANES], [f64; LANES]) {
-        let panels = redshifts.map(|redshift| self.panels.panel(redshift));
+        let panels: [&Panel; LANES] =
+            std::array::from_fn(|lane| self.panels.panel(redshifts[lane]));
         let turns = self.domain.turns();
         let u = std::array::from_fn(|lane| {
             if turns {
@@ -171,7 +172,7 @@ impl History {
     ) {
         let (panels, u) = self.coordinates(redshifts);
         if wanted.comoving || wanted.comoving_rest || wanted.conformal {
-            let distance = integral(panels.map(|panel| &panel.distance), &u);
+            let distance = integral(std::array::from_fn(|lane| &panels[lane].distance), &u);
             let base = |lane: usize| &panels[lane].at_centre;
             fill(&mut out.comoving, wanted.comoving, &rows, |lane| {
                 base(lane).comoving + distance[lane]
@@ -187,7 +188,7 @@ impl History {
             });
         }
         if wanted.lookback || wanted.age {
-            let time = integral(panels.map(|panel| &panel.time), &u);
+            let time = integral(std::array::from_fn(|lane| &panels[lane].time), &u);
             let base = |lane: usize| &panels[lane].at_centre;
             fill(&mut out.lookback, wanted.lookback, &rows, |lane| {
                 base(lane).lookback + time[lane]
@@ -197,7 +198,7 @@ impl History {
             });
         }
         if wanted.rate {
-            let rate = polynomials(panels.map(|panel| &panel.rate), &u);
+            let rate = polynomials(std::array::from_fn(|lane| &panels[lane].rate), &u);
             fill(&mut out.rate, true, &rows, |lane| {
                 panels[lane].rate_factor(u[lane]) * rate[lane]
             });

@@ -175,20 +175,41 @@ impl Panel {
     }
 }
 
-/// Σ `powers[k]` uᵏ by Horner's rule.
+/// Σ `powers[k]` uᵏ: even and odd powers by Horner's rule in u², two chains that
+/// need not wait for each other.
 #[inline]
 pub(super) fn polynomial(powers: &Powers, u: f64) -> f64 {
-    powers.iter().rev().fold(0.0, |sum, power| sum * u + power)
+    let square = u * u;
+    let mut even = powers[LAST];
+    let mut odd = powers[LAST - 1];
+    for k in (0..LAST - 1).rev().step_by(2) {
+        even = even * square + powers[k];
+    }
+    for k in (1..LAST - 2).rev().step_by(2) {
+        odd = odd * square + powers[k];
+    }
+    even + u * odd
 }
 
 /// A polynomial a lane, each lane with the very operations of [`polynomial`].
-#[inline]
+#[inline(always)]
 pub(super) fn polynomials(powers: [&Powers; LANES], u: &[f64; LANES]) -> [f64; LANES] {
-    let mut sums = [0.0; LANES];
-    for k in (0..LARGEST_NODES).rev() {
+    let square: [f64; LANES] = std::array::from_fn(|lane| u[lane] * u[lane]);
+    let mut even: [f64; LANES] = std::array::from_fn(|lane| powers[lane][LAST]);
+    let mut odd: [f64; LANES] = std::array::from_fn(|lane| powers[lane][LAST - 1]);
+    for k in (1..=LAST / 2).rev() {
         for lane in 0..LANES {
-            sums[lane] = sums[lane] * u[lane] + powers[lane][k];
+            even[lane] = even[lane] * square[lane] + powers[lane][2 * k - 2];
+        }
+        if k > 1 {
+            for lane in 0..LANES {
+                odd[lane] = odd[lane] * square[lane] + powers[lane][2 * k - 3];
+            }
         }
     }
-    sums
+    std::array::from_fn(|lane| even[lane] + u[lane] * odd[lane])
 }
+
+/// The highest power, an even one.
+const LAST: usize = LARGEST_NODES - 1;
+const _: () = assert!(LAST.is_multiple_of(2));
