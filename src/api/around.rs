@@ -3,7 +3,7 @@
 use super::cached::push_hexadecimal;
 use super::pack::packed;
 use super::refusal::{Refusal, explained};
-use super::timing::Timing;
+use super::timing::{SERVER_TIMING, Timing};
 use crate::wire::{Code, Fault};
 use axum::extract::Request;
 use axum::http::header::ACCEPT_ENCODING;
@@ -65,7 +65,6 @@ fn finished(
 
 const REQUEST_ID: HeaderName = HeaderName::from_static("x-request-id");
 const TRACEPARENT: HeaderName = HeaderName::from_static("traceparent");
-pub(super) const SERVER_TIMING: HeaderName = HeaderName::from_static("server-timing");
 
 fn head_fault(request: &Request) -> Option<Fault> {
     let uri = request

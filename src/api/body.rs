@@ -2,7 +2,7 @@
 
 use super::State;
 use super::refusal::Refusal;
-use super::unpack::Coding;
+use super::unpack::{Coding, too_large};
 use crate::wire::{Code, Fault};
 use axum::body::{Body, Bytes};
 use axum::http::HeaderMap;
@@ -98,12 +98,4 @@ async fn collect(mut body: Body, declared: usize, limit: usize) -> Result<Bytes,
     } else {
         whole.into()
     })
-}
-
-/// The refusal of something with more than `limit` bytes.
-pub(super) fn too_large(what: &str, limit: usize) -> Fault {
-    let detail = format!(
-        "{what} has more than {limit} bytes; send it in parts, rows don't depend on one another"
-    );
-    Fault::new(Code::BodyTooLarge, detail)
 }

@@ -1,17 +1,11 @@
 //! The OpenAPI document: gathered from the routes, completed with what is the same for all.
 
+use super::tags::{AROUND, CONVERT, MODELS};
 use crate::wire::{Code, Problem};
 use std::sync::LazyLock;
 use utoipa::OpenApi;
 use utoipa::openapi::path::Operation;
 use utoipa::openapi::{Content, HttpMethod, Ref, RefOr, Response, ResponseBuilder};
-
-/// The tag of the conversions.
-pub(crate) const CONVERT: &str = "convert";
-/// The tag of the models.
-pub(crate) const MODELS: &str = "models";
-/// The tag of what is around the jobs.
-pub(crate) const AROUND: &str = "service";
 
 /// The OpenAPI 3.1 document of the service.
 pub fn document() -> utoipa::openapi::OpenApi {

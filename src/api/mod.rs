@@ -13,6 +13,7 @@ mod refusal;
 mod respond;
 mod routes;
 mod state;
+mod tags;
 mod timing;
 mod unpack;
 

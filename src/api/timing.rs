@@ -1,8 +1,9 @@
 //! Where the time of a request went, for the header Server-Timing.
 
-use super::around::SERVER_TIMING;
-use axum::http::{HeaderMap, HeaderValue};
+use axum::http::{HeaderMap, HeaderName, HeaderValue};
 use std::time::{Duration, Instant};
+
+pub(super) const SERVER_TIMING: HeaderName = HeaderName::from_static("server-timing");
 
 /// A watch that notes the stages of a request.
 #[derive(Debug)]

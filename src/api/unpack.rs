@@ -1,6 +1,5 @@
 //! Packed request bodies: gzip with all its members, Brotli, Zstandard.
 
-use super::body::too_large;
 use crate::wire::{Code, Fault};
 use axum::http::HeaderValue;
 use std::io::{self, Read};
@@ -88,3 +87,11 @@ fn zstandard(packed: &[u8]) -> io::Result<impl Read + '_> {
 const BUFFER_BYTES: usize = 16 * 1024;
 /// 8 MiB, what RFC 8878 recommends every decoder to support.
 const WINDOW_LOG: u32 = 23;
+
+/// The refusal of something with more than `limit` bytes.
+pub(super) fn too_large(what: &str, limit: usize) -> Fault {
+    let detail = format!(
+        "{what} has more than {limit} bytes; send it in parts, rows don't depend on one another"
+    );
+    Fault::new(Code::BodyTooLarge, detail)
+}

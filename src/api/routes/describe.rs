@@ -1,10 +1,10 @@
 //! What follows from a model.
 
 use super::super::accept::{JSON, choose};
-use super::super::document::MODELS;
 use super::super::model::{Chosen, overloaded};
 use super::super::refusal::Refusal;
 use super::super::respond::whole;
+use super::super::tags::MODELS;
 use super::super::timing::Timing;
 use super::super::{State, body, examples};
 use crate::jobs::describe as job;

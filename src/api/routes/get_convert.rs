@@ -3,9 +3,9 @@
 use super::super::accept::choose;
 use super::super::cached::Cached;
 use super::super::conversion::{FORMATS, answer};
-use super::super::document::CONVERT;
 use super::super::model::Chosen;
 use super::super::refusal::Refusal;
+use super::super::tags::CONVERT;
 use super::super::timing::Timing;
 use super::super::{State, examples};
 use crate::wire::convert::schema::ConvertAnswer;

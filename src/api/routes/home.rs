@@ -2,9 +2,9 @@
 
 use super::super::State;
 use super::super::accept::{Format, TEXT, choose};
-use super::super::document::AROUND;
 use super::super::refusal::Refusal;
 use super::super::respond::whole;
+use super::super::tags::AROUND;
 use crate::page;
 use axum::extract;
 use axum::http::header::{CONTENT_SECURITY_POLICY, HOST, LINK};

@@ -1,6 +1,6 @@
 //! Whether the process answers.
 
-use super::super::document::AROUND;
+use super::super::tags::AROUND;
 use axum::http::header::CACHE_CONTROL;
 use axum::response::IntoResponse;
 

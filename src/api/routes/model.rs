@@ -2,10 +2,10 @@
 
 use super::super::State;
 use super::super::accept::JSON;
-use super::super::document::MODELS;
 use super::super::model::{entry, no_such_model};
 use super::super::refusal::Refusal;
 use super::super::respond::tagged;
+use super::super::tags::MODELS;
 use crate::wire::model::ModelEntry;
 use crate::wire::{Code, Query};
 use axum::extract::{self, Path, RawQuery};

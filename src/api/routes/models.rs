@@ -2,10 +2,10 @@
 
 use super::super::State;
 use super::super::accept::JSON;
-use super::super::document::MODELS;
 use super::super::model::{entry, status};
 use super::super::refusal::Refusal;
 use super::super::respond::tagged;
+use super::super::tags::MODELS;
 use crate::wire::model::ModelsAnswer;
 use crate::wire::{Code, Fault, Query};
 use axum::extract::{self, RawQuery};

@@ -1,9 +1,10 @@
 //! The document that describes the service.
 
 use super::super::accept::JSON;
-use super::super::document::{AROUND, written};
+use super::super::document::written;
 use super::super::refusal::Refusal;
 use super::super::respond::tagged;
+use super::super::tags::AROUND;
 use axum::http::HeaderMap;
 use axum::response::Response;
 

@@ -2,9 +2,9 @@
 
 use super::super::accept::choose;
 use super::super::conversion::{FORMATS, answer, read};
-use super::super::document::CONVERT;
 use super::super::model::Chosen;
 use super::super::refusal::Refusal;
+use super::super::tags::CONVERT;
 use super::super::timing::Timing;
 use super::super::{State, body, examples};
 use crate::wire::Query;

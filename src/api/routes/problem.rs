@@ -1,9 +1,9 @@
 //! The explanation of a problem code: where `type` of a problem leads.
 
 use super::super::accept::{JSON, TEXT, choose};
-use super::super::document::AROUND;
 use super::super::refusal::Refusal;
 use super::super::respond::whole;
+use super::super::tags::AROUND;
 use crate::wire::{Code, Fault, ProblemPage, meant};
 use axum::extract::Path;
 use axum::http::HeaderMap;

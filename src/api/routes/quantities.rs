@@ -1,9 +1,9 @@
 //! The catalogue of quantities.
 
 use super::super::accept::JSON;
-use super::super::document::CONVERT;
 use super::super::refusal::Refusal;
 use super::super::respond::tagged;
+use super::super::tags::CONVERT;
 use crate::wire::Query;
 use crate::wire::quantities::QuantitiesAnswer;
 use axum::extract::RawQuery;

@@ -1,8 +1,8 @@
 //! Whether new requests should come here.
 
 use super::super::State;
-use super::super::document::AROUND;
 use super::super::refusal::Refusal;
+use super::super::tags::AROUND;
 use crate::wire::{Code, Fault};
 use axum::extract;
 use axum::http::header::CACHE_CONTROL;

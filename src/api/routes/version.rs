@@ -3,9 +3,9 @@
 use super::super::State;
 use super::super::accept::JSON;
 use super::super::around::{HEADER_BYTES, URI_BYTES};
-use super::super::document::AROUND;
 use super::super::refusal::Refusal;
 use super::super::respond::tagged;
+use super::super::tags::AROUND;
 use crate::wire::Query;
 use crate::wire::convert::MOST_VALUES;
 use crate::wire::service::{Build, Constant, SERVICE, StatedLimits, VersionAnswer};
